@@ -1,0 +1,87 @@
+// Runs one of the commands of package.json in Node: bundles it into build/ when a source is newer than the bundle, then
+// calls its `main`. Nothing of the build is written to stdout, which belongs to the command.
+
+import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync } from 'node:fs';
+import { dirname, join } from 'node:path';
+import { fileURLToPath, pathToFileURL } from 'node:url';
+
+const root = join(dirname(fileURLToPath(import.meta.url)), '..', '..');
+
+/** Command -> the module that exports `main(argv)`. */
+const commands = {
+  replay: 'src/replay/replay.ts',
+  read: 'src/replay/read.ts',
+  serve: 'src/replay/serve.ts',
+  'check-reference': 'test/reference/check-reference.ts',
+  bench: 'test/bench/bench.ts',
+  'demo-data': 'demo-data/make-all.ts',
+};
+
+/** What a bundle can be made of. */
+const sources = ['src', 'cells', 'demo-data', 'test/bench', 'test/reference', 'test/support', 'package-lock.json'];
+
+/** Latest change below a path; data files of the tests do not count. */
+function latestChange(path) {
+  const stat = statSync(path);
+  if (!stat.isDirectory()) return /\.(ts|mjs|csv|json)$/.test(path) ? stat.mtimeMs : 0;
+  let latest = stat.mtimeMs;
+  for (const entry of readdirSync(path)) {
+    if (entry === 'cases' || entry === 'tails-grids') continue;
+    latest = Math.max(latest, latestChange(join(path, entry)));
+  }
+  return latest;
+}
+
+function isFresh(bundle) {
+  if (!existsSync(bundle)) return false;
+  const made = statSync(bundle).mtimeMs;
+  return sources.every((path) => !existsSync(join(root, path)) || latestChange(join(root, path)) < made);
+}
+
+/** Writes build/NAME.mjs; another process that does the same at the same moment cannot see half a file. */
+async function bundle(entry, target) {
+  const { build } = await import('vite');
+  const folder = join(root, 'build', `making-${process.pid}`);
+  mkdirSync(folder, { recursive: true });
+  try {
+    await build({
+      configFile: false,
+      root,
+      logLevel: 'error',
+      ssr: { noExternal: true, external: ['vite', 'playwright-core', 'axe-core', '@sparticuz/chromium'] },
+      worker: { format: 'es' },
+      build: {
+        ssr: join(root, entry),
+        outDir: folder,
+        target: 'node20',
+        minify: false,
+        emptyOutDir: false,
+        copyPublicDir: false,
+        rolldownOptions: { output: { entryFileNames: 'main.mjs', codeSplitting: false } },
+      },
+    });
+    renameSync(join(folder, 'main.mjs'), target);
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
+
+async function run(name, argv) {
+  const entry = commands[name];
+  if (entry === undefined) throw new Error(`there is no command called ${name}`);
+  const target = join(root, 'build', `${name}.mjs`);
+  if (!isFresh(target)) await bundle(entry, target);
+  const { main } = await import(pathToFileURL(target).href);
+  return main(argv);
+}
+
+const [name = '', ...argv] = process.argv.slice(2);
+run(name, argv).then(
+  (code) => {
+    process.exitCode = code;
+  },
+  (error) => {
+    process.stderr.write(`${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`);
+    process.exitCode = 1;
+  },
+);
