@@ -1,0 +1,5 @@
+import type { CaseMethods } from './case-data.ts';
+import { outlierRuleMethods } from './outlier-rules.ts';
+
+/** Methods of the sections "Association and regression", "Distribution checks", "Outlier rules", "Transformations". */
+export const methods: CaseMethods = { ...outlierRuleMethods };
