@@ -1,0 +1,245 @@
+/**
+ * Resamples as counts of ranks: with the scores sorted once, a resample is a count per rank, and every statistic of order
+ * is read off in one walk. Resamples are drawn in blocks with a stream of their own, so that the result depends neither
+ * on how many are drawn together nor by whom.
+ */
+import { LARGEST_BOUND, startState } from './rng.ts';
+
+/** Above this many scores one 32-bit word gives one draw instead of two. */
+const LARGEST_SHORT = 16_000;
+
+/**
+ * Resamples in one block, a function of the number of scores only.
+ * @param n number of scores in all groups together, >= 1
+ * @returns between 8 and 512 resamples
+ * @source design of the kernels: blocks of about 100,000 draws
+ * @checked by hand
+ */
+export function blockSize(n: number): number {
+  return Math.max(8, Math.min(512, Math.floor(131_072 / n)));
+}
+
+/**
+ * Draws a resample of n ranks into counts.
+ * @param counts n counts, added to (all zero before the call for a plain resample)
+ * @param n number of scores, 1 to 2^21
+ * @param state four words of the generator, advanced
+ * @throws RangeError when n is out of range or `counts` is shorter than n
+ * @source Lemire (2019), two exact bounded 16-bit draws a word for n <= 16,000, one 32-bit draw beyond
+ * @checked theory: counts are multinomial; agrees with exact enumeration of the bootstrap mean and SD
+ */
+export function drawCounts(counts: Int32Array, n: number, state: Int32Array): void {
+  if (!(Number.isInteger(n) && n >= 1 && n <= LARGEST_BOUND && counts.length >= n)) {
+    throw new RangeError(`*n* must be an integer from 1 to ${LARGEST_BOUND} with as many counts; got ${n}`);
+  }
+  if (n <= LARGEST_SHORT) drawShort(counts, n, state);
+  else drawLong(counts, n, state);
+}
+
+// The generator's four words live in local variables here: in an array they cost three times as much.
+function drawShort(counts: Int32Array, n: number, state: Int32Array): void {
+  let a = state[0] as number;
+  let b = state[1] as number;
+  let c = state[2] as number;
+  let d = state[3] as number;
+  const reject = 65_536 % n;
+  let left = n;
+  while (left > 0) {
+    const t = (((a + b) | 0) + d) | 0;
+    d = (d + 1) | 0;
+    a = b ^ (b >>> 9);
+    b = (c + (c << 3)) | 0;
+    c = (((c << 21) | (c >>> 11)) + t) | 0;
+    const low = (t & 0xffff) * n;
+    if ((low & 0xffff) >= reject) {
+      counts[low >>> 16]!++;
+      left--;
+    }
+    const high = (t >>> 16) * n;
+    if ((high & 0xffff) >= reject && left > 0) {
+      counts[high >>> 16]!++;
+      left--;
+    }
+  }
+  state[0] = a;
+  state[1] = b;
+  state[2] = c;
+  state[3] = d;
+}
+
+function drawLong(counts: Int32Array, n: number, state: Int32Array): void {
+  let a = state[0] as number;
+  let b = state[1] as number;
+  let c = state[2] as number;
+  let d = state[3] as number;
+  const reject = 2 ** 32 % n;
+  let left = n;
+  while (left > 0) {
+    const t = (((a + b) | 0) + d) | 0;
+    d = (d + 1) | 0;
+    a = b ^ (b >>> 9);
+    b = (c + (c << 3)) | 0;
+    c = (((c << 21) | (c >>> 11)) + t) | 0;
+    const product = (t >>> 0) * n;
+    const high = Math.floor(product * 2 ** -32);
+    if (product - high * 2 ** 32 >= reject) {
+      counts[high]!++;
+      left--;
+    }
+  }
+  state[0] = a;
+  state[1] = b;
+  state[2] = c;
+  state[3] = d;
+}
+
+/**
+ * Runs B resamples of one or more groups, block by block.
+ * @param sizes number of scores per group, each 1 to 2^21
+ * @param B number of resamples, >= 1
+ * @param seed 0 to 2^32 - 1
+ * @param read called with each resample's counts per group and its index; must leave every count at 0
+ * @param streamNumber stream of the seed (default 0)
+ * @throws RangeError when a size, B or the seed is out of range
+ * @source design of the kernels: block i draws from (i, stream, seed)
+ * @checked invariance: any way of cutting B into runs of whole blocks gives the same resamples
+ */
+export function resample(
+  sizes: readonly number[],
+  B: number,
+  seed: number,
+  read: (counts: readonly Int32Array[], index: number) => void,
+  streamNumber = 0,
+): void {
+  if (!(Number.isInteger(B) && B >= 1)) throw new RangeError(`*B* must be a whole number of at least 1; got ${B}`);
+  const counts = sizes.map((n) => new Int32Array(n));
+  const perBlock = blockSize(sizes.reduce((total, n) => total + n, 0));
+  const state = new Int32Array(4);
+  for (let index = 0; index < B; index++) {
+    if (index % perBlock === 0) startState(state, index / perBlock, streamNumber, seed);
+    for (const own of counts) drawCounts(own, own.length, state);
+    read(counts, index);
+  }
+}
+
+/**
+ * Sum of the middle of a resample, and clears the counts.
+ * @param s ascending scores
+ * @param counts times each score was drawn, n in all; set to 0
+ * @param g number left out at EACH end
+ * @returns sum of the resample's sorted scores g to n - 1 - g
+ * @source design of the kernels: walk the counts once; never the total minus the tails, where a far score cancels digits
+ * @checked agrees with sorting the resample, rtol 1e-12
+ */
+export function walkTrimmedSum(s: Float64Array, counts: Int32Array, g: number): number {
+  const n = counts.length;
+  const stop = n - g;
+  let total = 0;
+  let at = 0;
+  let i = 0;
+  // Three stretches instead of a test per score: below the cut, the middle, above it.
+  for (; i < n && at <= g; i++) {
+    const c = counts[i] as number;
+    counts[i] = 0;
+    const next = at + c;
+    if (next > g) total += (Math.min(next, stop) - Math.max(at, g)) * (s[i] as number);
+    at = next;
+  }
+  for (; i < n && at < stop; i++) {
+    const c = counts[i] as number;
+    counts[i] = 0;
+    const next = at + c;
+    total += (Math.min(next, stop) - at) * (s[i] as number);
+    at = next;
+  }
+  if (i < n) counts.fill(0, i);
+  return total;
+}
+
+/** What a walk over a resample leaves for a winsorized or studentized statistic. */
+export interface WinsorWalk {
+  /** Sum of the trimmed scores. */
+  trimmed: number;
+  /** Sum of the winsorized scores. */
+  sum: number;
+  /** Sum of squares of the winsorized scores. */
+  squares: number;
+}
+
+/**
+ * Trimmed and winsorized sums of a resample, and clears the counts.
+ * @param s ascending scores, best centred near 0 (the squares are not corrected for the mean)
+ * @param counts times each score was drawn, n in all; set to 0
+ * @param g number left out, or drawn in, at EACH end
+ * @param out receives the three sums
+ * @source design of the kernels: one walk
+ * @checked agrees with sorting the resample, rtol 1e-12
+ */
+export function walkWinsorized(s: Float64Array, counts: Int32Array, g: number, out: WinsorWalk): void {
+  const n = counts.length;
+  const stop = n - g;
+  let trimmed = 0;
+  let squares = 0;
+  let at = 0;
+  let low = 0;
+  let high = 0;
+  let i = 0;
+  for (; i < n && at < stop; i++) {
+    const c = counts[i] as number;
+    if (c === 0) continue;
+    counts[i] = 0;
+    const next = at + c;
+    if (next > g) {
+      const score = s[i] as number;
+      if (at <= g) low = score;
+      const times = Math.min(next, stop) - Math.max(at, g);
+      trimmed += times * score;
+      squares += times * score * score;
+      high = score;
+    }
+    at = next;
+  }
+  if (i < n) counts.fill(0, i);
+  out.trimmed = trimmed;
+  out.sum = trimmed + g * (low + high);
+  out.squares = squares + g * (low * low + high * high);
+}
+
+/**
+ * Median of a resample, and clears the counts.
+ * @param s ascending scores
+ * @param counts times each score was drawn, n in all; set to 0
+ * @returns the resample's median
+ * @source design of the kernels: walk to the middle
+ * @checked agrees with sorting the resample, exactly
+ */
+export function walkMedian(s: Float64Array, counts: Int32Array): number {
+  const n = counts.length;
+  const first = (n - 1) >> 1;
+  const second = n >> 1;
+  let at = 0;
+  let i = 0;
+  while (at <= first) at += counts[i++] as number;
+  const low = s[i - 1] as number;
+  while (at <= second) at += counts[i++] as number;
+  const high = s[i - 1] as number;
+  counts.fill(0);
+  return low === high ? low : low + (high - low) / 2;
+}
+
+/**
+ * The resample itself, ascending, and clears the counts.
+ * @param s ascending scores
+ * @param counts times each score was drawn, n in all; set to 0
+ * @param out receives the n scores of the resample
+ * @source design of the kernels: walk the counts once
+ * @checked agrees with drawing the scores themselves
+ */
+export function walkExpand(s: Float64Array, counts: Int32Array, out: Float64Array): void {
+  let at = 0;
+  for (let i = 0; i < counts.length; i++) {
+    const score = s[i] as number;
+    for (let c = counts[i] as number; c > 0; c--) out[at++] = score;
+    counts[i] = 0;
+  }
+}
