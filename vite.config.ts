@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import type { Plugin, Rolldown } from 'vite';
 import { defineConfig, type ViteUserConfig } from 'vitest/config';
+import { LongTable } from './test/support/long-table.ts';
 
 type Bundle = Rolldown.OutputBundle;
 type Asset = Rolldown.OutputAsset;
@@ -105,6 +106,7 @@ function testsFor(long: boolean): NonNullable<ViteUserConfig['test']> {
   return {
     root: '.',
     env: long ? { STANDFAST_LONG: '1' } : {},
+    reporters: long ? ['default', new LongTable()] : ['default'],
     maxWorkers: 2,
     projects: [
       {

@@ -20,22 +20,22 @@ const commands = {
 /** What a bundle can be made of. */
 const sources = ['src', 'cells', 'demo-data', 'test/bench', 'test/reference', 'test/support', 'package-lock.json'];
 
-/** Latest change below a path; data files of the tests do not count. */
+/** Read when a command runs, so they are in no bundle. */
+const notBundled = ['test/reference/cases', 'test/reference/tails'];
+
+/** Latest change of a source at or below a path. */
 function latestChange(path) {
-  const stat = statSync(path);
+  if (notBundled.includes(path)) return 0;
+  const stat = statSync(join(root, path));
   if (!stat.isDirectory()) return /\.(ts|mjs|csv|json)$/.test(path) ? stat.mtimeMs : 0;
-  let latest = stat.mtimeMs;
-  for (const entry of readdirSync(path)) {
-    if (entry === 'cases' || entry === 'tails-grids') continue;
-    latest = Math.max(latest, latestChange(join(path, entry)));
-  }
-  return latest;
+  const inside = readdirSync(join(root, path)).map((entry) => latestChange(`${path}/${entry}`));
+  return Math.max(stat.mtimeMs, ...inside);
 }
 
 function isFresh(bundle) {
   if (!existsSync(bundle)) return false;
   const made = statSync(bundle).mtimeMs;
-  return sources.every((path) => !existsSync(join(root, path)) || latestChange(join(root, path)) < made);
+  return sources.every((path) => !existsSync(join(root, path)) || latestChange(path) < made);
 }
 
 /** Writes build/NAME.mjs; another process that does the same at the same moment cannot see half a file. */
