@@ -99,12 +99,13 @@ export class Engine {
     return this.#cancelled;
   }
 
-  /** What the cell's sentence and check may look at: the newest record, and what the cells above last came to. */
+  /** What the cell's sentence may look at: the newest record, and what the cell and those above it last came to. */
   context(cellId: string): Context {
-    const { plan } = this.#entry(cellId).run;
+    const { plan, last } = this.#entry(cellId).run;
     const given: Record<string, unknown> = {};
     for (const { port, from } of plan.ports) given[port] = this.#valueOf(from);
-    return contextOf(this.#record(this.#latest), given);
+    const context = contextOf(this.#record(this.#latest), given);
+    return last === null ? context : { ...context, own: last };
   }
 
   /** The cell's settings with every shared number replaced by its value now; one that does not exist counts as none. */
