@@ -1,8 +1,12 @@
-import { rankSumGiven } from './rank-sum-given.ts';
+import { latticeMass, rankSumGiven } from './rank-sum-given.ts';
 import { requireInteger, requireNumber, requireProbability } from './require.ts';
 
-/** Largest n1 * n2 for which the untied distribution is tabulated. */
+/** Largest n1 * n2 for which the untied distribution is tabulated, where the smaller sample has at most FEW scores. */
 const MOST_PAIRS = 1_000_000;
+/** Beyond this size of the smaller sample the factors of the Gaussian binomial cancel too much (1e-11 at 150). */
+const FEW = 100;
+/** Largest n1 * n2 where both samples are larger than that: about half a second. */
+const MOST_PAIRS_OF_MANY = 40_000;
 /** Largest n1 * n2 for which the distribution with ties is enumerated within about 50 ms. */
 const MOST_TIED_PAIRS = 10_000;
 
@@ -12,8 +16,8 @@ function timesRatio(mass: Float64Array, up: number, down: number, top: number): 
   for (let u = down; u <= top; u++) mass[u]! += mass[u - down]!;
 }
 
-/** P(U <= u) for u up to the middle of 0..n1 n2: Gaussian binomial coefficients, one factor at a time. */
-function buildLowerHalf(few: number, many: number): Float64Array {
+/** P(U = u) for u up to the middle of 0..n1 n2: Gaussian binomial coefficients, one factor at a time. */
+function gaussianBinomial(few: number, many: number): Float64Array {
   const half = Math.floor((few * many) / 2);
   const mass = new Float64Array(half + 1);
   mass[0] = 1;
@@ -25,8 +29,14 @@ function buildLowerHalf(few: number, many: number): Float64Array {
     // Each stage is symmetric; copying keeps the cancellation out of its far side.
     for (let u = middle + 1; u <= Math.min(half, end); u++) mass[u] = mass[end - u]!;
   }
-  for (let u = 1; u <= half; u++) mass[u]! += mass[u - 1]!;
   return mass;
+}
+
+/** P(U <= u) for u up to the middle of 0..n1 n2. */
+function buildLowerHalf(few: number, many: number): Float64Array {
+  const lower = few <= FEW ? gaussianBinomial(few, many) : latticeMass(few, many, Math.floor((few * many) / 2));
+  for (let u = 1; u < lower.length; u++) lower[u]! += lower[u - 1]!;
+  return lower;
 }
 
 /** The table of the last sizes asked for: a sweep asks for the same one many times. */
@@ -40,7 +50,8 @@ function lowerHalf(few: number, many: number): Float64Array {
 function check(n1: number, n2: number): void {
   requireInteger('n1', n1, 1);
   requireInteger('n2', n2, 1);
-  if (n1 * n2 > MOST_PAIRS) throw new RangeError(`*n1 n2* must be at most ${MOST_PAIRS}; got ${n1 * n2}`);
+  const most = Math.min(n1, n2) <= FEW ? MOST_PAIRS : MOST_PAIRS_OF_MANY;
+  if (n1 * n2 > most) throw new RangeError(`*n1 n2* must be at most ${most} here; got ${n1 * n2}`);
 }
 
 function tail(u: number, n1: number, n2: number, upper: boolean): number {
@@ -74,7 +85,7 @@ export function feasible(n1: number, n2: number): boolean {
  * @param n1 scores in the first sample, whole, at least 1
  * @param n2 scores in the second sample, whole, at least 1
  * @returns P(U <= u) where both samples come from one distribution
- * @throws RangeError if u is NaN, a size is not a positive whole number, or n1 n2 > 1,000,000
+ * @throws RangeError if u is NaN, a size is not a positive whole number, or n1 n2 is above 1,000,000 (40,000 where both exceed 100)
  * @source Mann & Whitney 1947; counts are the coefficients of the Gaussian binomial (n1 + n2 choose n1)_q
  * @checked grid wilcox_cdf, 1e-11
  */
@@ -88,7 +99,7 @@ export function rankSumLower(u: number, n1: number, n2: number): number {
  * @param n1 scores in the first sample, whole, at least 1
  * @param n2 scores in the second sample, whole, at least 1
  * @returns P(U > u) where both samples come from one distribution
- * @throws RangeError if u is NaN, a size is not a positive whole number, or n1 n2 > 1,000,000
+ * @throws RangeError if u is NaN, a size is not a positive whole number, or n1 n2 is above 1,000,000 (40,000 where both exceed 100)
  * @source Mann & Whitney 1947; counts are the coefficients of the Gaussian binomial (n1 + n2 choose n1)_q
  * @checked grid wilcox_cdf, 1e-11
  */
@@ -136,5 +147,8 @@ export function rankSumTied(midranks: Float64Array, n1: number, u: number): { lo
   requireInteger('n1', n1, 1, midranks.length - 1);
   const n2 = midranks.length - n1;
   if (!feasible(n1, n2)) throw new RangeError(`*n1 n2* must be at most ${MOST_TIED_PAIRS}; got ${n1 * n2}`);
-  return rankSumGiven(midranks, n1, n2, u);
+  for (const rank of midranks) requireNumber('midranks', rank);
+  const tied = new Set(midranks).size < midranks.length;
+  if (tied) return rankSumGiven(midranks, n1, n2, u);
+  return { lower: rankSumLower(u, n1, n2), upper: rankSumUpper(Math.ceil(u) - 1, n1, n2) };
 }
