@@ -191,9 +191,28 @@ export function interquartileRange(x: Float64Array, type: QuantileType = 7): num
  * @checked cases `median_absolute_deviation`, rtol 1e-9
  */
 export function madSorted(s: Float64Array, center = medianSorted(s)): number {
-  const deviations = new Float64Array(s.length);
-  for (let i = 0; i < s.length; i++) deviations[i] = Math.abs((s[i] as number) - center);
-  return medianSorted(deviations.sort());
+  const n = s.length;
+  if (n === 0) throw new RangeError('*s* must hold at least 1 score; got 0');
+  let right = 0;
+  let end = n;
+  while (right < end) {
+    const middle = (right + end) >> 1;
+    if ((s[middle] as number) < center) right = middle + 1;
+    else end = middle;
+  }
+  // Deviations grow outwards from the centre on both sides, so they are merged up to the middle one instead of sorted.
+  let left = right - 1;
+  let low = 0;
+  let high = 0;
+  for (let taken = 0; taken <= n >> 1; taken++) {
+    low = high;
+    const below = left >= 0 ? center - (s[left] as number) : Infinity;
+    const above = right < n ? (s[right] as number) - center : Infinity;
+    if (below <= above) left--;
+    else right++;
+    high = Math.min(below, above);
+  }
+  return n % 2 === 1 || low === high ? high : low + (high - low) / 2;
 }
 
 /**

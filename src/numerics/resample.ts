@@ -164,6 +164,19 @@ export interface WinsorWalk {
   sum: number;
   /** Sum of squares of the winsorized scores. */
   squares: number;
+  /** Smallest and largest winsorized score. */
+  low: number;
+  high: number;
+}
+
+/**
+ * An empty walk to be filled.
+ * @returns zeros
+ * @source design of the kernels
+ * @checked by hand
+ */
+export function winsorWalk(): WinsorWalk {
+  return { trimmed: 0, sum: 0, squares: 0, low: 0, high: 0 };
 }
 
 /**
@@ -203,6 +216,8 @@ export function walkWinsorized(s: Float64Array, counts: Int32Array, g: number, o
   out.trimmed = trimmed;
   out.sum = trimmed + g * (low + high);
   out.squares = squares + g * (low * low + high * high);
+  out.low = low;
+  out.high = high;
 }
 
 /**

@@ -42,7 +42,7 @@ export interface RobustDTwoGroups extends RobustD {
  * @param options `trim` integer percentage at each end (default 20)
  * @returns value with the pooled winsorized SD, `byFirst` and `bySecond` with one group's; equals Cohen's d for normal
  *   scores of equal spread; null with a reason for a group of one or a winsorized SD of 0. An interval is made by
- *   bootstrap: bootstrapTwoGroups with 'akp-robust-d'
+ *   bootstrap: akpInterval
  * @throws RangeError when a group is empty or not finite, or `trim` is not 0 to 49
  * @source Algina, Keselman & Penfield (2005): c (m_t1 - m_t2) / S_w, S_w^2 pooled over n_j - 1
  * @checked cases `akp_robust_d`, rtol 1e-9
@@ -83,7 +83,7 @@ export function akpRobustD(
  * @param d differences, at least one, finite
  * @param options `trim` integer percentage at each end (default 20)
  * @returns c times the trimmed mean over the winsorized SD of the differences; null with a reason for a single difference
- *   or a winsorized SD of 0. An interval is made by bootstrap: bootstrapOneSample with 'akp-robust-d'
+ *   or a winsorized SD of 0. An interval is made by bootstrap: akpIntervalPaired
  * @throws RangeError when empty, not finite, or `trim` is not 0 to 49
  * @source Algina, Keselman & Penfield (2005)
  * @checked cases `akp_robust_d_paired`, rtol 1e-9
