@@ -37,6 +37,8 @@ export interface Finding {
   readonly sameUnit: boolean;
   /** Value of the estimate when the conditions do not differ: 0 for differences, 1 for ratios, .5 for probabilities. */
   readonly nullValue: number;
+  /** Whether a larger estimate means that the first condition is smaller (a probability of being lower). */
+  readonly reversed: boolean;
   /** Integer percentage trimmed at each end; 0 where nothing is trimmed. */
   readonly trim: number;
   readonly estimate: number | null;
@@ -60,4 +62,21 @@ export interface Finding {
   readonly cautions: readonly string[];
   /** Author, year and convention: "how this is computed". */
   readonly method: string;
+}
+
+/** The numbers of a row as they are saved and replayed: no words that a later version might put otherwise. */
+export function findingRecord(finding: Finding) {
+  return {
+    estimator: finding.estimator,
+    trim: finding.trim,
+    estimate: finding.estimate,
+    se: finding.se,
+    df: finding.df,
+    statistic: finding.statistic ? [finding.statistic.name, finding.statistic.value] : null,
+    p: finding.p,
+    interval: finding.interval,
+    effects: finding.effects.map((effect) => ({ value: effect.value, interval: effect.interval })),
+    n: finding.n,
+    counts: finding.counts.map((each) => [each.condition, each.n, each.h]),
+  };
 }

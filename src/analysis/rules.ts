@@ -1,4 +1,4 @@
-/** THE LIST of exclusion rules: what each may be set to, and how one is applied. */
+/** THE LIST of exclusion rules: what each may be set to, what it reads, and its short words. */
 
 export type Scope = 'pooled' | 'participant' | 'condition' | 'participant-condition';
 export type Measure = 'MAD' | 'SD' | 'fences';
@@ -10,7 +10,7 @@ export interface NamedRule {
   readonly reason: string;
 }
 
-/** A fixed limit in the column's unit; trials, or participants by the mean of one of their columns. */
+/** A fixed limit in the column's unit, on trials or on each participant's mean of the column. */
 export interface LimitRule {
   readonly rule: 'limit';
   readonly on: 'trial' | 'participant';
@@ -33,10 +33,10 @@ export interface ExtremeRule {
   readonly sides: 'both' | 'above' | 'below';
 }
 
-/** A participant with fewer than a share of kept trials (percent of the trials read, in any condition or overall). */
+/** A participant with fewer than a share of kept trials. */
 export interface KeptShareRule {
   readonly rule: 'kept-share';
-  /** Percent of a participant's trials; null = not applied. */
+  /** Percent of the rows read for the participant; null = not applied. */
   readonly least: number | null;
 }
 
@@ -50,4 +50,41 @@ export interface RuleStep {
   readonly participants: readonly string[];
   /** Short words for the flow: "below 150 ms". */
   readonly label: string;
+}
+
+/** Whether a rule reads the condition a row belongs to. */
+export function readsCondition(rule: Rule): boolean {
+  return rule.rule === 'extreme' && (rule.scope === 'condition' || rule.scope === 'participant-condition');
+}
+
+/** Whether a rule takes whole participants, and so comes after the rules on trials. */
+export function onParticipants(rule: Rule): boolean {
+  return rule.rule === 'kept-share' || (rule.rule !== 'named' && rule.on === 'participant');
+}
+
+const SCOPE_WORDS: Readonly<Record<Scope, string>> = {
+  pooled: 'all scores pooled',
+  participant: 'within participant',
+  condition: 'within condition',
+  'participant-condition': 'within participant and condition',
+};
+
+/** Short words for a rule: "beyond 2.5 MAD within participant", "below 150 ms", "by name". */
+export function ruleLabel(rule: Rule, unit: string): string {
+  switch (rule.rule) {
+    case 'named':
+      return 'by name';
+    case 'limit':
+      return rule.limit === null ? 'no limit' : `${rule.side} ${rule.limit}${unit === '' ? '' : ` ${unit}`}`;
+    case 'extreme':
+      return `${cutoffLabel(rule)} ${SCOPE_WORDS[rule.scope]}`;
+    case 'kept-share':
+      return rule.least === null ? 'no least share' : `fewer than ${rule.least} % kept`;
+  }
+}
+
+/** "beyond 3 MAD", "beyond fences of 1.5 quartile distances", "no cutoff". */
+export function cutoffLabel(rule: Pick<ExtremeRule, 'measure' | 'cutoff'>): string {
+  if (rule.cutoff === null) return 'no cutoff';
+  return rule.measure === 'fences' ? `beyond fences of ${rule.cutoff} IQR` : `beyond ${rule.cutoff} ${rule.measure}`;
 }
