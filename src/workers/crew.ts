@@ -71,17 +71,22 @@ class Crew {
 
   #share(): void {
     for (const place of this.#places) {
-      if (place.task !== null) continue;
-      const task = this.#queue.shift();
-      if (task === undefined) return;
-      try {
-        place.worker ??= this.#hire(place);
-        place.worker.post({ type: 'run', id: task.id, name: task.name, args: task.args });
-        place.task = task;
-      } catch (error) {
-        // No worker can be had, or the arguments cannot be sent: that is this job's failure.
-        this.#settle(task, () => task.reject(error));
+      while (place.task === null) {
+        const task = this.#queue.shift();
+        if (task === undefined) return;
+        this.#give(place, task);
       }
+    }
+  }
+
+  #give(place: Place, task: Task): void {
+    try {
+      place.worker ??= this.#hire(place);
+      place.worker.post({ type: 'run', id: task.id, name: task.name, args: task.args });
+      place.task = task;
+    } catch (error) {
+      // No worker can be had, or the arguments cannot be sent: that is this job's failure, and the next one's turn.
+      this.#settle(task, () => task.reject(error));
     }
   }
 

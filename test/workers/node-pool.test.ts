@@ -52,7 +52,10 @@ describe('nodePool', () => {
   test('refuses: unknown jobs and arguments that cannot be sent; the workers stay usable', async () => {
     await expect(pool.run('toString' as 'sum', [], env())).rejects.toThrow('got "toString"');
     await expect(pool.run('echo', () => 1, env())).rejects.toThrow('could not be cloned');
-    await expect(pool.run('sum', [1, 2], env())).resolves.toBe(3);
+    const busy = [1, 2].map(() => pool.run('count', { to: 2, ms: 10 }, env()));
+    const behind = [pool.run('echo', () => 1, env()), pool.run('sum', [1, 2], env())];
+    expect((await Promise.allSettled(behind)).map((each) => each.status)).toEqual(['rejected', 'fulfilled']);
+    expect(await Promise.all(busy)).toEqual([2, 2]);
     expect(made).toBe(2);
   });
 
