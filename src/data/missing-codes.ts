@@ -1,0 +1,89 @@
+/** Whole cells that stand for a missing value where the rest of the column is numbers or dates; letter case is free. */
+export const MISSING_CODES: readonly string[] = ['NA', 'N/A', 'NaN', 'null', '.'];
+
+const LOOKUP = new Map(MISSING_CODES.map((code) => [code.toLowerCase(), code]));
+
+/**
+ * The missing code a cell holds.
+ *
+ * @param text a whole cell
+ * @returns the code as MISSING_CODES writes it, or null
+ */
+export function missingCode(text: string): string | null {
+  return text.length > 4 ? null : (LOOKUP.get(text.toLowerCase()) ?? null);
+}
+
+/** A number that may stand for a missing value. */
+export interface SuspiciousCode {
+  readonly value: number;
+  readonly count: number;
+  /** Row of its first appearance, counted from 1. */
+  readonly row: number;
+  /** Range of the other values. */
+  readonly low: number;
+  readonly high: number;
+}
+
+/** Numbers in use as codes for "missing", "refused" or "not asked": common practice. */
+const USUAL = [
+  0, 9, 88, 99, 888, 999, 8888, 9999, 88888, 99999, 999999, -1, -9, -88, -99, -888, -999, -8888, -9999, -99999,
+];
+
+/**
+ * Finds numbers of the kind used as missing codes that lie beyond the rest by more than half the range of the rest.
+ * They are only pointed out: a guess would change the data.
+ *
+ * @param values one double a row, NaN = missing
+ * @returns each such number, the farthest first
+ * @source numbers in use as codes, and the half range: common practice
+ */
+export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
+  if (!mayHoldCodes(values)) return [];
+  const found: SuspiciousCode[] = [];
+  const judged = new Set<number>();
+  const left = new Set<number>();
+  for (;;) {
+    const all = rangeWithout(values, left);
+    const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end));
+    if (code === undefined) return found;
+    judged.add(code);
+    const rest = rangeWithout(values, new Set([...left, code]));
+    const reach = (rest.high - rest.low) / 2;
+    if (rest.count < 3 || !(reach > 0)) continue;
+    if (code >= rest.low - reach && code <= rest.high + reach) continue;
+    left.add(code);
+    found.push({ value: code, ...occurrences(values, code), low: rest.low, high: rest.high });
+  }
+}
+
+/** A code far from the rest is the lowest or the highest value; columns of a million rows are left after one look. */
+function mayHoldCodes(values: Float64Array): boolean {
+  let low = Infinity;
+  let high = -Infinity;
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row] as number;
+    if (value < low) low = value;
+    if (value > high) high = value;
+  }
+  return USUAL.includes(low) || USUAL.includes(high);
+}
+
+function rangeWithout(values: Float64Array, left: ReadonlySet<number>): { low: number; high: number; count: number } {
+  let low = Infinity;
+  let high = -Infinity;
+  let count = 0;
+  for (let row = 0; row < values.length; row++) {
+    const value = values[row] as number;
+    if (Number.isNaN(value) || left.has(value)) continue;
+    if (value < low) low = value;
+    if (value > high) high = value;
+    count++;
+  }
+  return { low, high, count };
+}
+
+function occurrences(values: Float64Array, code: number): { count: number; row: number } {
+  let count = 0;
+  for (const value of values) if (value === code) count++;
+  return { count, row: values.indexOf(code) + 1 };
+}
