@@ -111,6 +111,8 @@ export interface Context {
   readonly shared: readonly SharedNumber[];
   /** Port -> value above, where it is there. */
   readonly given: { readonly [port: string]: Values[ValueType] | undefined };
+  /** What this cell itself last came to, where it has: counts in a sentence come from here. */
+  readonly own?: Computed<unknown> | undefined;
   /** Data blocks of the worksheet: id and file name. */
   readonly data: readonly { readonly id: string; readonly name: string }[];
 }

@@ -1,0 +1,142 @@
+import { type CautionId, cautionText, simulatedLevel } from '../../src/analysis/cautions.ts';
+import type { Result } from '../../src/analysis/compare.ts';
+import { participantNoun } from '../../src/analysis/design.ts';
+import { LEAST_FOR_P } from '../../src/analysis/row.ts';
+import { takeSamples } from '../../src/analysis/samples.ts';
+import { standardDeviation } from '../../src/numerics/moments.ts';
+import type { Note } from '../kind.ts';
+import { alphaText, count, counted, fixed, levelPercent, plural } from '../numbers.ts';
+
+/** What the margin says beside a comparison. */
+export function comparisonNotes(result: Result): Note[] {
+  const { first, second, resamples, seed } = result.comparison;
+  const { unit } = result.scores.design.roles;
+  const planned = result.findings[result.planned];
+  const noun = participantNoun(result.scores.design.roles);
+  const people =
+    result.scope === 'within'
+      ? `${counted(planned?.n ?? 0, noun)} with both ${plural(result.comparison.factor)}`
+      : (planned?.counts ?? []).map((each) => `${count(each.n)} ${each.condition}`).join(', ');
+  const notes: Note[] = [
+    {
+      type: 'note',
+      text: `${first} minus ${second}${unit === '' ? '' : `, in ${unit}`}, with ${levelPercent(1 - result.comparison.alpha)} intervals; ${people}. The square row is the one the plan names.`,
+    },
+  ];
+  if (result.left.length > 0) {
+    const named = result.left.slice(0, 3).map((each) => `${each.participant} (${each.why})`);
+    const more = result.left.length - named.length;
+    notes.push({ type: 'note', text: `Not compared: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.` });
+  }
+  for (const id of applying(result)) {
+    notes.push({ type: warns(id) ? 'caution' : 'note', id, text: cautionText(id, factsOf(id, result)) });
+  }
+  notes.push({ type: 'note', text: cautionText('R8B', { resamples: count(resamples), seed }) });
+  return notes;
+}
+
+function warns(id: CautionId): boolean {
+  return id !== 'R15';
+}
+
+/** The cautions of every row, once each, the same in any order of rows. */
+function applying(result: Result): CautionId[] {
+  const ids = new Set<string>();
+  for (const finding of result.findings) for (const id of finding.cautions) ids.add(id);
+  if (result.findings.some((finding) => !finding.sameUnit && finding.estimate !== null)) ids.add('R20');
+  const order: CautionId[] = ['R2', 'R22', 'R3', 'R18', 'R24', 'R25', 'R5', 'R20', 'R15'];
+  return order.filter((id) => ids.has(id));
+}
+
+function factsOf(id: CautionId, result: Result): Readonly<Record<string, string | number>> {
+  const { comparison, scores } = result;
+  switch (id) {
+    case 'R2':
+      return { condition: comparison.factor, simulated: simulatedWords(result) };
+    case 'R3':
+      return { trim: comparison.trim };
+    case 'R5':
+      return { n: count(nonPositive(result)) };
+    case 'R18':
+      return spreadFacts(result);
+    case 'R20':
+      return {
+        rows: 'The ratio and the probability',
+        unit: scores.design.roles.unit || 'means',
+      };
+    case 'R22':
+      return { least: LEAST_FOR_P, where: leastWhere(result) };
+    case 'R24':
+      return { n: Math.min(...(result.findings[0]?.counts ?? []).map((each) => each.n)) };
+    case 'R25':
+      return smallestFacts(result);
+    default:
+      return {};
+  }
+}
+
+function samplesOf(result: Result) {
+  const { factor, first, second } = result.comparison;
+  return takeSamples(result.scores, factor, first, second);
+}
+
+function nonPositive(result: Result): number {
+  const { x, y } = samplesOf(result);
+  return [...x, ...y].filter((value) => value <= 0).length;
+}
+
+function spreadFacts(result: Result): Record<string, string> {
+  const { x, y } = samplesOf(result);
+  const [sx, sy] = [standardDeviation(x), standardDeviation(y)];
+  const larger = sx > sy ? x : y;
+  const smallGroup = larger.length < Math.max(x.length, y.length);
+  return {
+    ratio: fixed(Math.max(sx, sy) / Math.min(sx, sy), 1),
+    where: smallGroup ? 'smaller' : 'larger',
+    bias: smallGroup ? 'liberal (too many false alarms)' : 'conservative (too few)',
+  };
+}
+
+function leastWhere(result: Result): string {
+  const finding = result.findings.find((each) => each.cautions.includes('R22'));
+  const least = [...(finding?.counts ?? [])].sort((a, b) => a.h - b.h)[0];
+  return least ? `under ${least.condition} in some rows` : 'in some rows';
+}
+
+function smallestFacts(result: Result): Record<string, string> {
+  const { x, y } = samplesOf(result);
+  const sides = result.comparison.alternative === 'two-sided' ? 2 : 1;
+  let ways = 2 ** x.length;
+  if (result.scope === 'between') {
+    ways = 1;
+    for (let i = 1; i <= x.length; i++) ways = (ways * (y.length + i)) / i;
+  }
+  return {
+    n: result.scope === 'within' ? `${x.length} pairs` : `groups of ${x.length} and ${y.length}`,
+    smallest: fixed(sides / ways, 3).replace(/^0/, ''),
+    alpha: alphaText(result.comparison.alpha).slice(4),
+  };
+}
+
+/** The simulated level of methods 5.4, where the rule and the groups are among those simulated. */
+function simulatedWords(result: Result): string {
+  const { rules, roles } = result.scores.design;
+  const rule = rules.find((each) => each.rule === 'extreme' && each.cutoff !== null && each.scope === 'condition');
+  if (rule?.rule !== 'extreme' || rule.cutoff === null) return '';
+  if (result.scope !== 'between' || roles.rows !== 'one score' || rule.sides !== 'both' || roles.within.length > 0)
+    return '';
+  return simulatedLevel({ sizes: sizesBefore(result), measure: rule.measure, cutoff: rule.cutoff });
+}
+
+/** Group sizes before any rule. */
+function sizesBefore(result: Result): number[] {
+  const { design } = result.scores;
+  const factor = design.factors.find((each) => each.name === result.comparison.factor);
+  return [result.comparison.first, result.comparison.second].map((level) => {
+    const people = new Set<number>();
+    factor?.codes.forEach((code, row) => {
+      if (factor.levels[code] === level) people.add(design.participant[row] as number);
+    });
+    return people.size;
+  });
+}

@@ -1,0 +1,27 @@
+import { claimKind } from './claim/kind.ts';
+import { comparisonKind } from './comparison/kind.ts';
+import { dataKind } from './data/kind.ts';
+import { deriveKind } from './derive/kind.ts';
+import { designKind } from './design/kind.ts';
+import { exclusionKind } from './exclusion/kind.ts';
+import type { Registry } from './kind.ts';
+import { noteKind } from './note/kind.ts';
+import { reshapeKind } from './reshape/kind.ts';
+import { scoreKind } from './score/kind.ts';
+import { standingKind } from './standing/kind.ts';
+
+/** Every cell kind by its name in saved files, in the order of the "Then ..." list. */
+export const registry = {
+  data: dataKind,
+  reshape: reshapeKind,
+  derive: deriveKind,
+  design: designKind,
+  exclusion: exclusionKind,
+  score: scoreKind,
+  comparison: comparisonKind,
+  claim: claimKind,
+  note: noteKind,
+  standing: standingKind,
+} as const satisfies Registry;
+
+export type KindName = keyof typeof registry;

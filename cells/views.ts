@@ -1,0 +1,29 @@
+import { nothing, type TemplateResult } from 'lit';
+import { claimView } from './claim/view.ts';
+import { comparisonView } from './comparison/view.ts';
+import { exclusionView } from './exclusion/view.ts';
+import type { Computed, ViewContext } from './kind.ts';
+import { noteView } from './note/view.ts';
+import type { KindName } from './registry.ts';
+import { scoreView } from './score/view.ts';
+import { standingView } from './standing/view.ts';
+
+/** Draws what a cell came to. */
+export type View = (computed: Computed<never, never>, context: ViewContext) => TemplateResult | typeof nothing;
+
+/** Kinds whose sentence, margin and tables say it all. */
+const plain: View = () => nothing;
+
+/** Kind -> view; a kind without one does not compile. */
+export const views: Readonly<Record<KindName, View>> = {
+  data: plain,
+  reshape: plain,
+  derive: plain,
+  design: plain,
+  exclusion: exclusionView,
+  score: scoreView,
+  comparison: comparisonView,
+  claim: claimView,
+  note: noteView,
+  standing: standingView,
+};
