@@ -10,7 +10,7 @@ import { signedRankLower, signedRankQuantile } from './tails/signed-rank.ts';
 export interface HodgesLehmann {
   readonly estimate: number;
   readonly interval: Limits | null;
-  /** Confidence the interval really has without ties; null without an interval. */
+  /** Confidence the interval really has without ties; below the level when even all averages are too few. */
   readonly coverage: number | null;
   /** Ranks behind the limits: 'exact' distribution or its 'normal' approximation (beyond the size cap). */
   readonly how: 'exact' | 'normal';
@@ -30,7 +30,7 @@ interface Ranking {
 
 function normalRank(count: number, variance: number, tail: number) {
   const sd = Math.sqrt(variance);
-  const k = Math.max(0, Math.ceil(count / 2 - 0.5 - normalQuantileUpper(tail) * sd));
+  const k = Math.max(1, Math.ceil(count / 2 - 0.5 - normalQuantileUpper(tail) * sd));
   return { k, missed: normalUpper((count / 2 - k + 0.5) / sd), how: 'normal' as const };
 }
 
@@ -40,20 +40,19 @@ function estimateWithLimits(ranking: Ranking, level: number, alternative: Altern
   const high = pick(Math.floor(count / 2) + 1);
   const estimate = count % 2 === 1 || low === high ? low : low + (high - low) / 2;
   const { k, missed, how } = ranking.rank(outside(level, alternative));
-  if (k < 1) return { estimate, interval: null, coverage: null, how, reason: 'too few scores for this level' };
-  const interval: Limits = [
-    alternative === 'less' ? null : pick(k),
-    alternative === 'greater' ? null : pick(count - k + 1),
-  ];
-  return { estimate, interval, coverage: 1 - (alternative === 'two-sided' ? 2 : 1) * missed, how };
+  const coverage = 1 - (alternative === 'two-sided' ? 2 : 1) * missed;
+  if (coverage <= 0) return { estimate, interval: null, coverage: null, how, reason: 'too few scores for an interval' };
+  const lower = alternative === 'less' ? null : pick(k);
+  const upper = alternative === 'greater' ? null : pick(count - k + 1);
+  return { estimate, interval: [lower, upper], coverage, how };
 }
 
 /**
  * Median of the Walsh averages: the estimate that belongs to the signed-rank test, of scores or of differences.
  * @param x scores or differences of pairs, at least one, finite
  * @param options direction and level
- * @returns estimate, interval (order statistics of the averages at the exact quantile, no ties assumed), its coverage;
- *   no interval, with a reason, when no rank reaches the level
+ * @returns estimate, interval (order statistics of the averages at the exact quantile, no ties assumed), its coverage
+ *   (below the level when even the full range is too narrow); no interval, with a reason, for a single score
  * @throws RangeError when empty, not finite, or the level is not strictly between 0 and 1
  * @source Hodges & Lehmann (1963); limits: the k-th smallest and k-th largest average, k the signed-rank quantile
  * @checked cases `hodges_lehmann_location`, `hodges_lehmann_one_sample`, rtol 1e-9
@@ -66,8 +65,8 @@ export function hodgesLehmannPaired(x: Float64Array, options: TestOptions = {}):
   const count = (n * (n + 1)) / 2;
   const rank = (tail: number) => {
     if (n > LARGEST_EXACT) return normalRank(count, (n * (n + 1) * (2 * n + 1)) / 24, tail);
-    const k = signedRankQuantile(tail, n);
-    return { k, missed: k < 1 ? 0 : signedRankLower(k - 1, n), how: 'exact' as const };
+    const k = Math.max(1, signedRankQuantile(tail, n));
+    return { k, missed: signedRankLower(k - 1, n), how: 'exact' as const };
   };
   return estimateWithLimits({ count, pick: (k) => walshAverage(s, k), rank }, level, alternative);
 }
@@ -77,8 +76,8 @@ export function hodgesLehmannPaired(x: Float64Array, options: TestOptions = {}):
  * @param x scores of the first group, at least one, finite
  * @param y scores of the second group, at least one, finite
  * @param options direction and level
- * @returns estimate, interval (order statistics of the differences at the exact quantile, no ties assumed), its coverage;
- *   no interval, with a reason, when no rank reaches the level
+ * @returns estimate, interval (order statistics of the differences at the exact quantile, no ties assumed), its coverage
+ *   (below the level when even the full range is too narrow); no interval, with a reason, for a single pair of scores
  * @throws RangeError when a group is empty or not finite, or the level is not strictly between 0 and 1
  * @source Hodges & Lehmann (1963); limits: the k-th smallest and k-th largest difference, k the rank-sum quantile
  * @checked cases `hodges_lehmann_shift`, rtol 1e-9
@@ -94,8 +93,8 @@ export function hodgesLehmannShift(x: Float64Array, y: Float64Array, options: Te
   const count = n1 * n2;
   const rank = (tail: number) => {
     if (!feasible(n1, n2)) return normalRank(count, (count * (n1 + n2 + 1)) / 12, tail);
-    const k = rankSumQuantile(tail, n1, n2);
-    return { k, missed: k < 1 ? 0 : rankSumLower(k - 1, n1, n2), how: 'exact' as const };
+    const k = Math.max(1, rankSumQuantile(tail, n1, n2));
+    return { k, missed: rankSumLower(k - 1, n1, n2), how: 'exact' as const };
   };
   return estimateWithLimits({ count, pick: (k) => pairDifference(s, t, k), rank }, level, alternative);
 }

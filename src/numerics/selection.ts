@@ -1,35 +1,37 @@
 /** k-th smallest of all pairwise sums without forming them. */
 
-/** All sums a[i] + b[j], or only those with j >= i when `triangle` (a and b then the same scores). */
+/** Sums a[i] + b[j], both ascending, over all j or only over j >= from(i). */
 interface Sums {
   readonly a: Float64Array;
   readonly b: Float64Array;
-  readonly triangle: boolean;
+  readonly from: (i: number) => number;
+  /** Number of sums. */
+  readonly size: number;
 }
 
+const everyOne = () => 0;
+
 function countUpTo(sums: Sums, value: number): number {
-  const { a, b, triangle } = sums;
+  const { a, b, from } = sums;
   let count = 0;
   let j = b.length;
   for (let i = 0; i < a.length; i++) {
     const own = a[i] as number;
     while (j > 0 && own + (b[j - 1] as number) > value) j--;
-    const from = triangle ? i : 0;
-    if (j > from) count += j - from;
+    count += Math.max(0, j - from(i));
   }
   return count;
 }
 
 function between(sums: Sums, low: number, high: number, size: number): Float64Array {
-  const { a, b, triangle } = sums;
+  const { a, b, from } = sums;
   const out = new Float64Array(size);
   let at = 0;
   let j = b.length;
   for (let i = 0; i < a.length; i++) {
     const own = a[i] as number;
     while (j > 0 && own + (b[j - 1] as number) > high) j--;
-    for (let m = j - 1; m >= (triangle ? i : 0) && own + (b[m] as number) > low; m--)
-      out[at++] = own + (b[m] as number);
+    for (let m = j - 1; m >= from(i) && own + (b[m] as number) > low; m--) out[at++] = own + (b[m] as number);
   }
   return out.sort();
 }
@@ -39,7 +41,7 @@ function kth(sums: Sums, k: number): number {
   let low = -Infinity;
   let high = (a[a.length - 1] as number) + (b[b.length - 1] as number);
   let below = 0;
-  let upTo = sums.triangle ? (a.length * (a.length + 1)) / 2 : a.length * b.length;
+  let upTo = sums.size;
   const few = 4 * (a.length + b.length) + 64;
   let bottom = (a[0] as number) + (b[0] as number);
   // Bisection over the values; the invariant is count(<= low) = below < k <= upTo = count(<= high).
@@ -75,8 +77,9 @@ function requireRank(k: number, size: number): void {
  * @checked agrees with sorting all averages, exactly
  */
 export function walshAverage(s: Float64Array, k: number): number {
-  requireRank(k, (s.length * (s.length + 1)) / 2);
-  return kth({ a: s, b: s, triangle: true }, k) / 2;
+  const size = (s.length * (s.length + 1)) / 2;
+  requireRank(k, size);
+  return kth({ a: s, b: s, from: (i) => i, size }, k) / 2;
 }
 
 /**
@@ -90,7 +93,25 @@ export function walshAverage(s: Float64Array, k: number): number {
  * @checked agrees with sorting all differences, exactly
  */
 export function pairDifference(s: Float64Array, t: Float64Array, k: number): number {
-  requireRank(k, s.length * t.length);
-  const negated = Float64Array.from(t, (score) => -score).reverse();
-  return kth({ a: s, b: negated, triangle: false }, k);
+  const size = s.length * t.length;
+  requireRank(k, size);
+  return kth({ a: s, b: t.map((score) => -score).reverse(), from: everyOne, size }, k);
+}
+
+/**
+ * k-th smallest distance between two scores of one sample.
+ * @param s ascending scores, at least two, finite
+ * @param k rank, 1 to n(n-1)/2
+ * @returns k-th smallest of s[j] - s[i] over i < j, in the scores' unit
+ * @throws RangeError when k is out of range
+ * @source Johnson & Mizoguchi (1978): count over a sorted matrix; here bisection on the value, then the few left sorted
+ * @checked agrees with sorting all distances, exactly
+ */
+export function pairDistance(s: Float64Array, k: number): number {
+  const n = s.length;
+  const size = (n * (n - 1)) / 2;
+  requireRank(k, size);
+  // Over all ordered pairs the distances s[i] - s[j] with i <= j come first (none positive): n(n+1)/2 of them.
+  const all = { a: s, b: s.map((score) => -score).reverse(), from: everyOne, size: n * n };
+  return kth(all, size + n + k);
 }
