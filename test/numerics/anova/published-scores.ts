@@ -27,3 +27,15 @@ export const warpBreaks = [
 
 /** Means 2, 3 and 7, variance 1 each: sums of squares 42 between, 6 within. */
 export const threeByThree = [Float64Array.of(1, 2, 3), Float64Array.of(2, 3, 4), Float64Array.of(6, 7, 8)];
+
+/** Hand lotion sales of five brands (columns) in seven stores (Conover 1999, 5.8; R help page of quade.test). */
+export const handLotion = [
+  Float64Array.of(5, 1, 16, 5, 10, 19, 10),
+  Float64Array.of(4, 3, 12, 4, 9, 18, 7),
+  Float64Array.of(7, 1, 22, 3, 7, 28, 6),
+  Float64Array.of(10, 0, 22, 5, 13, 37, 8),
+  Float64Array.of(12, 2, 35, 4, 10, 58, 7),
+];
+
+/** Three participants, three levels: sums of squares 24 levels, 6 participants, 4 error. */
+export const threeLevels = [Float64Array.of(1, 2, 3), Float64Array.of(2, 4, 6), Float64Array.of(6, 6, 6)];

@@ -226,6 +226,11 @@ function crossing(data: CaseData, rows: Parameters<typeof levelsOf>[1], factors:
   return { counts, cells, size: counts.reduce((product, k) => product * k, 1) };
 }
 
+/** A layout with an effect that cannot be computed counts as undefined; what can be is given beside it. */
+function undefinedUnless(computable: boolean): Plain {
+  return computable ? {} : { ...undefinedResult };
+}
+
 const factorial: CaseMethods = {
   factorial_anova(data, args) {
     const factors = stringsArg(args, 'factors');
@@ -266,6 +271,7 @@ const factorial: CaseMethods = {
     const { F, df1, df2, p, ssBetween, ssWithin } = result.between;
     const betweenKeys = F === null ? undefinedResult : { F, df1, df2, p, ss_effect: ssBetween, ss_error: ssWithin };
     return {
+      ...undefinedUnless(F !== null && result.within.F !== null),
       effects: {
         [between]: betweenKeys,
         [within]: withinKeys(result.within),
@@ -281,10 +287,11 @@ const factorial: CaseMethods = {
     const { scores, columns, subjects } = repeatedScores(data, args, within);
     const counts = within.map((_, f) => new Set(columns.map((key) => key[f])).size);
     const effects: Plain = {};
-    for (const one of withinFactorsAnova(scores, counts)) {
+    const found = withinFactorsAnova(scores, counts);
+    for (const one of found) {
       effects[one.factors.map((f) => within[f]).join(':')] = { ...withinKeys(one), ...mauchlyKeys(one.mauchly) };
     }
-    return { effects, n: subjects.length };
+    return { ...undefinedUnless(found.every((one) => one.F !== null)), effects, n: subjects.length };
   },
   welch_james(data, args) {
     const between = stringsArg(args, 'between');
@@ -324,4 +331,20 @@ function repeatedCells(data: CaseData, args: CaseArgs) {
   return { groups, counts, columns: all.columns };
 }
 
-export const methods: CaseMethods = { ...kGroups, ...pairs, ...repeated, ...factorial };
+/** A refusal of the numerics (a RangeError) answers an "undefined" case as well as a reason does. */
+function refusing(method: CaseMethods[string]): CaseMethods[string] {
+  return (data, args) => {
+    try {
+      return method(data, args);
+    } catch (error) {
+      if (error instanceof RangeError) return { ...undefinedResult, reason: error.message };
+      throw error;
+    }
+  };
+}
+
+const offered: CaseMethods = { ...kGroups, ...pairs, ...repeated, ...factorial };
+
+export const methods: CaseMethods = Object.fromEntries(
+  Object.entries(offered).map(([name, method]) => [name, refusing(method)]),
+);
