@@ -21,6 +21,8 @@ export interface DocumentChange {
   readonly label: string;
   readonly record: Worksheet;
   readonly before: Worksheet;
+  /** Whether it is a further step of the burst before it. */
+  readonly continued: boolean;
 }
 
 /** A sentence for the decision log; null = nothing changed after all. */
@@ -84,12 +86,12 @@ export class WorksheetDocument {
     const base = step?.record ?? before;
     const text = typeof label === 'string' ? label : label(base, after);
     if (step !== null) this.#past.pop();
-    if (text === null) return this.#unchanged(before, { ...base, log: base.log });
+    if (text === null) return this.#unchanged(before, base);
     this.#past.push({ label: text, record: base });
     this.#future = [];
     this.#burst = options.merge === undefined ? null : { key: options.merge, at: this.#options.clock() };
     const log = this.#log(base, after, text, options.reason);
-    this.#become('edit', text, { ...after, log });
+    this.#become('edit', text, { ...after, log }, step !== null);
     if (after.opening.state !== base.opening.state) this.#past = [];
     return true;
   }
@@ -155,10 +157,10 @@ export class WorksheetDocument {
     return step.label;
   }
 
-  #become(type: ChangeType, label: string, record: Worksheet): void {
+  #become(type: ChangeType, label: string, record: Worksheet, continued = false): void {
     const before = this.#record;
     this.#record = record;
-    for (const listener of this.#listeners) listener({ type, label, record, before });
+    for (const listener of this.#listeners) listener({ type, label, record, before, continued });
   }
 }
 

@@ -1,0 +1,164 @@
+import { html, type PropertyValues, type TemplateResult } from 'lit';
+import './choice-editor.ts';
+import './choices-editor.ts';
+import './file-editor.ts';
+import './number-editor.ts';
+import './text-editor.ts';
+import type { Blank, Num } from '../../cells/kind.ts';
+import { setShared } from './cell-actions.ts';
+import { fileActions } from './data-actions.ts';
+import { demoFiles } from './demos.ts';
+import { LightElement } from './light-element.ts';
+import type { Page } from './page.ts';
+import { shareBlank } from './share-blank.ts';
+
+/** The small panel under a blank in which it is filled; Escape closes it and the focus goes back to the blank. */
+export class BlankPanel extends LightElement {
+  static override properties = { blank: { attribute: false }, cellId: {}, page: { attribute: false } };
+  declare blank: Blank;
+  declare cellId: string;
+  declare page: Page;
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    document.addEventListener('pointerdown', this.#outside, true);
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    document.removeEventListener('pointerdown', this.#outside, true);
+  }
+
+  protected override render(): TemplateResult {
+    return html`<div
+      class="panel"
+      role="dialog"
+      aria-label=${this.blank.label}
+      data-part="editor"
+      @keydown=${this.#key}
+      @focusout=${this.#left}
+      @sf-done=${() => this.#close(true)}
+    >
+      <p class="panel-name">${this.blank.label}</p>
+      ${this.#editor()}
+    </div>`;
+  }
+
+  protected override async firstUpdated(_changed: PropertyValues): Promise<void> {
+    this.#place();
+    // the editor inside draws a moment later
+    await new Promise((resolve) => requestAnimationFrame(resolve));
+    const wanted =
+      '[role=option][tabindex="0"], input.figure, textarea, input[type=checkbox]:not(:disabled), input, button';
+    const first = this.querySelector<HTMLElement>('.filter') ?? this.querySelector<HTMLElement>(wanted);
+    first?.focus({ preventScroll: true });
+    if (first instanceof HTMLInputElement && first.type === 'text') first.select();
+    this.scrollIntoView({ block: 'nearest' });
+  }
+
+  #editor(): TemplateResult {
+    const { blank, page, cellId } = this;
+    const editor = blank.editor;
+    const fill = (settings: Parameters<Page['fill']>[2]): void => page.fill(cellId, blank.key, settings);
+    switch (editor.type) {
+      case 'choice': {
+        const choose = (value: string): void => {
+          fill(editor.set(value));
+          this.#close(true);
+        };
+        return html`<sf-choice
+          .options=${editor.options}
+          .value=${editor.value}
+          .label=${blank.label}
+          .choose=${choose}
+        ></sf-choice>`;
+      }
+      case 'choices':
+        return html`<sf-choices
+          .options=${editor.options}
+          .values=${editor.values}
+          .atLeast=${editor.atLeast}
+          .label=${blank.label}
+          .choose=${(values: readonly string[]) => fill(editor.set(values))}
+        ></sf-choices>`;
+      case 'number': {
+        const actions = {
+          set: (value: Num) => fill(editor.set(value)),
+          setShared: (id: string, value: number | null) => setShared(page, id, value),
+          share: (name: string) => shareBlank(page, cellId, blank, name),
+        };
+        return html`<sf-number
+          .editor=${editor}
+          .shared=${page.worksheet.shared}
+          .label=${blank.label}
+          .actions=${actions}
+        ></sf-number>`;
+      }
+      case 'text':
+        return html`<sf-text
+          .value=${editor.value}
+          .long=${editor.long}
+          .label=${blank.label}
+          .check=${editor.check}
+          .set=${(value: string) => fill(editor.set(value))}
+        ></sf-text>`;
+      case 'file':
+        return html`<sf-file
+          .value=${editor.value}
+          .blocks=${page.worksheet.data}
+          .demos=${demoFiles()}
+          .actions=${fileActions(page, cellId, blank.key, editor, () => this.#close(true))}
+        ></sf-file>`;
+    }
+  }
+
+  #blankElement(): HTMLElement | null {
+    return document.querySelector(`[data-cell="${this.cellId}"] [data-blank="${this.blank.key}"]`);
+  }
+
+  /** Under its blank, inside the column of sentences. */
+  #place(): void {
+    const blank = this.#blankElement();
+    const column = this.parentElement;
+    const panel = this.querySelector<HTMLElement>('.panel');
+    if (blank === null || column === null || panel === null) return;
+    const lines = blank.getClientRects();
+    const line = lines[lines.length - 1] ?? blank.getBoundingClientRect();
+    const box = column.getBoundingClientRect();
+    const room = Math.max(0, box.width - panel.offsetWidth);
+    panel.style.left = `${Math.min(room, Math.max(0, line.left - box.left))}px`;
+    panel.style.top = `${line.bottom - box.top + 6}px`;
+  }
+
+  #key(event: KeyboardEvent): void {
+    if (event.key !== 'Escape') return;
+    event.preventDefault();
+    event.stopPropagation();
+    this.#close(true);
+  }
+
+  #left(event: FocusEvent): void {
+    const to = event.relatedTarget;
+    if (to instanceof Node && !this.contains(to)) this.#close(false);
+  }
+
+  #outside = (event: PointerEvent): void => {
+    const target = event.target as Node;
+    if (this.contains(target) || this.#blankElement()?.contains(target) === true) return;
+    // what was typed is taken before the panel goes
+    if (document.activeElement instanceof HTMLElement && this.contains(document.activeElement)) {
+      document.activeElement.blur();
+    }
+    this.#close(false);
+  };
+
+  #close(back: boolean): void {
+    const open = this.page.view.blank;
+    if (open === null || open.cellId !== this.cellId || open.key !== this.blank.key) return;
+    this.page.parts.document.settle();
+    this.page.show({ blank: null });
+    if (back) (this.#blankElement() ?? document.querySelector<HTMLElement>(`[data-cell="${this.cellId}"]`))?.focus();
+  }
+}
+
+customElements.define('sf-blank-panel', BlankPanel);

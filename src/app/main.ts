@@ -1,0 +1,94 @@
+import './style/base.css';
+import './style/page.css';
+import './style/cell.css';
+import './style/editor.css';
+import './style/foot.css';
+import './style/sheet.css';
+import './app-view.ts';
+import { registry } from '../../cells/registry.ts';
+import { views } from '../../cells/views.ts';
+import { Engine } from '../engine/engine.ts';
+import { workerPool } from '../workers/pool.ts';
+import { appendEntry } from '../worksheet/decision-log.ts';
+import type { Worksheet } from '../worksheet/format.ts';
+import type { AppView } from './app-view.ts';
+import { demoWorksheets } from './demos.ts';
+import { WorksheetDocument } from './document.ts';
+import { IdbStore } from './idb-store.ts';
+import { makeWorker } from './make-worker.ts';
+import { newWorksheet } from './new-worksheet.ts';
+import { wantedId, worksheetFrom } from './open-worksheet.ts';
+import { Page } from './page.ts';
+import { listenToPage } from './page-events.ts';
+import { PROGRAM_VERSION } from './program-version.ts';
+import { signedAs } from './signed-as.ts';
+import { Autosave, type Store, storeSentence } from './storage.ts';
+import { applyTheme, firstTheme, followSystem } from './theme.ts';
+
+/** The worksheet to begin with: the one in the address or open last, else the first demo, else an empty one. */
+async function firstWorksheet(store: Store): Promise<{ worksheet: Worksheet; problem: string | null }> {
+  const demos = demoWorksheets().flatMap((demo) => {
+    const opened = worksheetFrom(demo.text, demo.name);
+    return 'worksheet' in opened ? [opened.worksheet] : [];
+  });
+  const seed = crypto.getRandomValues(new Uint32Array(1))[0] as number;
+  const empty = { id: crypto.randomUUID(), seed, program: PROGRAM_VERSION, registry, block: null };
+  const fallback = demos[0] ?? newWorksheet(empty);
+  const id = wantedId();
+  if (id === null) return { worksheet: fallback, problem: null };
+  try {
+    const kept = await store.get(id);
+    return { worksheet: kept ?? demos.find((demo) => demo.id === id) ?? fallback, problem: null };
+  } catch (error) {
+    return { worksheet: demos.find((demo) => demo.id === id) ?? fallback, problem: storeSentence(error) };
+  }
+}
+
+async function start(): Promise<void> {
+  const theme = firstTheme();
+  applyTheme(theme, false);
+  const store = new IdbStore();
+  const { worksheet, problem } = await firstWorksheet(store);
+  const document_ = new WorksheetDocument({
+    worksheet,
+    now: () => new Date().toISOString(),
+    clock: () => performance.now(),
+    who: signedAs,
+    append: appendEntry,
+  });
+  const runner = workerPool({ create: makeWorker });
+  let page: Page | null = null;
+  const engine = new Engine({ registry, runner, onState: (cellId) => page?.stateChanged(cellId) });
+  const timers = {
+    set: (run: () => void, ms: number) => window.setTimeout(run, ms),
+    clear: (timer: number) => window.clearTimeout(timer),
+    now: () => new Date().toISOString(),
+  };
+  const autosave = new Autosave(store, timers, (save) => page?.show({ save }));
+  page = new Page(
+    { registry, views, document: document_, engine, runner, store, autosave },
+    {
+      blank: null,
+      panel: null,
+      sheet: null,
+      banner: problem === null ? null : { text: problem, wrong: true },
+      theme,
+      save: { state: 'saved' },
+      pointed: null,
+      incoming: null,
+      foot: window.innerWidth >= 700,
+    },
+  );
+  const shown = page;
+  followSystem((changed) => {
+    applyTheme(changed, false);
+    shown.show({ theme: changed });
+  });
+  listenToPage(shown);
+  Object.assign(globalThis, { standfast: { engine, document: document_ } });
+  const app = document.createElement('sf-app') as AppView;
+  app.page = shown;
+  document.querySelector('#standfast')?.replaceChildren(app);
+}
+
+void start();
