@@ -48,6 +48,9 @@ export interface Design {
   readonly steps: readonly RuleStep[];
 }
 
+/** Scores beyond this cannot be squared and summed in double precision. */
+const LARGEST_SCORE = 1e150;
+
 /**
  * States the design: gives every row its participant, its conditions and its score, and checks that the file bears
  * the statement out.
@@ -160,8 +163,10 @@ function outcomeValues(table: Table, name: string): Float64Array {
   }
   for (let row = 0; row < column.values.length; row++) {
     const value = column.values[row] as number;
-    if (value === Infinity || value === -Infinity) {
-      throw new Refusal(`Row ${table.origin[row]} of column "${name}" holds an infinite number. Correct the file.`);
+    if (Math.abs(value) > LARGEST_SCORE) {
+      throw new Refusal(
+        `Row ${table.origin[row]} of column "${name}" holds ${value}, too large to compute with. Correct the file, or derive the outcome in a larger unit.`,
+      );
     }
   }
   return column.values;
