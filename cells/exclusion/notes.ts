@@ -33,7 +33,11 @@ function extremeNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule
   if (rule.scope === 'condition' || (rule.scope === 'participant-condition' && design.roles.rows === 'one score')) {
     notes.push({ type: 'caution', id: 'R2', text: cautionText('R2', { condition: factors, simulated: '' }) });
   } else if (rule.scope === 'participant-condition') {
-    notes.push({ type: 'caution', id: 'R2T', text: cautionText('R2T', { condition: factors, counts: '' }) });
+    notes.push({
+      type: 'caution',
+      id: 'R2T',
+      text: cautionText('R2T', { condition: factors, counts: countWords(detail) }),
+    });
   }
   const limits = detail.flagged.limits;
   const flat = limits.filter((each) => each.reason?.startsWith('more than half'));
@@ -100,6 +104,13 @@ function sharesByCondition(design: Design, detail: ExclusionDetail) {
     cells.set(key, cell);
   }
   return [...cells.values()].map((cell) => ({ ...cell, share: cell.aside / cell.before }));
+}
+
+/** "18 to 20 scores": how many scores the scopes of the rule hold. */
+function countWords(detail: ExclusionDetail): string {
+  const sizes = detail.flagged.limits.map((each) => each.n);
+  const [least, most] = [Math.min(...sizes), Math.max(...sizes)];
+  return least === most ? `${least} scores each` : `${least} to ${most} scores`;
 }
 
 /** Every convention of the rule (methods 3.10). */

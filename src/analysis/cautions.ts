@@ -28,7 +28,7 @@ export const CAUTIONS = {
   R2T: {
     action: 'warn',
     sentence: (f) =>
-      `The rule looks at each participant under each ${text(f, 'condition')} separately. With equal counts of trials the level stays near its nominal value; with 20 trials against 8 and a cutoff of 2.5 SD it was .20 instead of .05 (simulated).${text(f, 'counts')}`,
+      `The rule looks at each participant under each ${text(f, 'condition')} separately. With equal counts of trials the level stays near its nominal value; with 20 trials against 8 and a cutoff of 2.5 SD it was .20 instead of .05 (simulated). Here they hold ${text(f, 'counts')}.`,
     source: 'methods 3.9, R2; Miller 1991',
   },
   R3: {
