@@ -3,20 +3,21 @@ import { stirlingError } from './special.ts';
 
 /** Derivative of log P(Z <= z): the density over the tail. */
 function slopeOfLog(z: number): number {
+  if (z < -1e4) return -z;
   return Math.exp(-0.5 * z * z - 0.9189385332046728 - normalLogLower(z));
 }
 
-/** log s where s^df exp(-df s^2 / 2) P(Z <= rate * s - shift), log-concave in s, is largest. */
-function peakOf(rate: number, shift: number, df: number): number {
+/** log s where s^df exp(-df s^2 / 2) P(Z <= rate * s - shift), log-concave in s, is largest, to within `near`. */
+function peakOf(rate: number, shift: number, df: number, near: number): number {
   const rising = (w: number) => {
-    const s = Math.exp(w);
-    return df * (1 - s * s) + slopeOfLog(rate * s - shift) * rate * s > 0;
+    const drive = rate * Math.exp(w);
+    return slopeOfLog(drive - shift) * drive - df * Math.expm1(2 * w) > 0;
   };
   let below = -1;
   let above = 1;
   while (!rising(below)) below *= 2;
   while (rising(above)) above *= 2;
-  for (let i = 0; i < 40 && above - below > 1e-6; i++) {
+  for (let i = 0; i < 200 && above - below > near; i++) {
     const middle = 0.5 * (below + above);
     if (rising(middle)) below = middle;
     else above = middle;
@@ -62,9 +63,9 @@ export function chiLogDensity(df: number): (w: number) => number {
 export function chiMixture(rate: number, shift: number, df: number): number {
   const logDensity = chiLogDensity(df);
   const logAt = (w: number) => logDensity(w) + normalLogLower(rate * Math.exp(w) - shift);
-  const peak = peakOf(rate, shift, df);
-  const top = logAt(peak);
   const step = Math.min(0.12, 0.55 / (Math.sqrt(2 * df) + Math.abs(shift) + 9));
+  const peak = peakOf(rate, shift, df, step);
+  const top = logAt(peak);
   let sum = 1;
   for (const direction of [-step, step]) {
     for (let i = 1; ; i++) {

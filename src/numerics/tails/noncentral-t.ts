@@ -1,6 +1,7 @@
 import { chiMixture } from './chi-mixture.ts';
+import { chiSquareLower, chiSquareUpper } from './chi-square.ts';
 import { fallingRoot } from './falling-root.ts';
-import { normalLower, normalQuantile } from './normal.ts';
+import { normalDensity, normalLower, normalQuantile } from './normal.ts';
 import { requireFinite, requireNumber, requirePositive } from './require.ts';
 import { tLower, tUpper } from './t.ts';
 
@@ -13,11 +14,30 @@ function check(t: number, df: number, ncp: number): void {
   requireFinite('ncp', ncp);
 }
 
+/**
+ * Lower tail for t > 0 where the noncentrality dwarfs the spread of the normal part: the mean over Z of the tail of S
+ * beyond (Z + ncp) / t, by the trapezoid rule; `below` takes the other tail, which is P(T > t).
+ */
+function overNormal(t: number, df: number, ncp: number, below: boolean): number {
+  const step = 0.25;
+  const tail = below ? chiSquareLower : chiSquareUpper;
+  let sum = 0;
+  for (let i = -156; i <= 156; i++) {
+    const root = (i * step + ncp) / t;
+    sum += normalDensity(i * step) * tail(df * root * root, df);
+  }
+  return Math.min(1, sum * step);
+}
+
 /** P(T <= t), from positive terms. */
 function lower(t: number, df: number, ncp: number): number {
   if (ncp === 0) return tLower(t, df);
   if (Math.abs(t) === Infinity) return t > 0 ? 1 : 0;
-  return df >= NORMAL_FROM ? normalLower(t - ncp) : chiMixture(t, ncp, df);
+  if (df >= NORMAL_FROM) return normalLower(t - ncp);
+  if (Math.abs(ncp) < 40 || ncp * ncp < 18 * df) return chiMixture(t, ncp, df);
+  // Opposite signs are farther apart than the smallest double.
+  if (ncp > 0) return t > 0 ? overNormal(t, df, ncp, false) : 0;
+  return t < 0 ? overNormal(-t, df, -ncp, true) : 1;
 }
 
 /**

@@ -47,6 +47,7 @@ function stepFor(k: number): number {
  */
 export function normalRangeLower(w: number, k: number): number {
   if (w <= 0) return 0;
+  if (w > 40) return 1;
   const at = (c: number) => {
     const low = c - 0.5 * w;
     return normalDensity(low) * Math.exp((k - 1) * Math.log(between(low, w)));
@@ -64,6 +65,7 @@ export function normalRangeLower(w: number, k: number): number {
  */
 export function normalRangeUpper(w: number, k: number): number {
   if (w <= 0) return 1;
+  if (w > 80) return 0;
   const at = (c: number) => {
     const low = c - 0.5 * w;
     const above = normalUpper(low);
