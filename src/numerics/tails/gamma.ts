@@ -11,13 +11,32 @@ const UNIFORM_FROM = 1e8;
 /** Temme's first coefficient c0 as a series in eta. */
 const TEMME = [-1 / 3, 1 / 12, -2 / 135, 1 / 864, 1 / 2835];
 
-/** x^shape e^-x / gamma(shape + 1). */
+/**
+ * Logarithm of x^shape e^-x / gamma(shape + 1).
+ * @param x above 0, finite
+ * @param shape above 0, finite
+ * @returns the logarithm, which does not underflow
+ * @source Loader 2000, equations 3 to 5
+ * @checked through the grids of gamma and chi-square
+ */
+export function gammaLogPrefactor(x: number, shape: number): number {
+  return -stirlingError(shape) - deviance(shape, x) - 0.5 * Math.log(TWO_PI * shape);
+}
+
+/** The same not as a logarithm. */
 function prefactor(x: number, shape: number): number {
   return Math.exp(-stirlingError(shape) - deviance(shape, x)) / Math.sqrt(TWO_PI * shape);
 }
 
-/** Lower tail over the prefactor: 1 + x / (a + 1) + x^2 / ((a + 1)(a + 2)) + ... */
-function series(x: number, shape: number): number {
+/**
+ * Lower tail over the prefactor, for x at most about the shape.
+ * @param x above 0
+ * @param shape above 0, finite
+ * @returns 1 + x / (shape + 1) + x^2 / ((shape + 1)(shape + 2)) + ...
+ * @source power series of the incomplete gamma function
+ * @checked through the grids of gamma and chi-square
+ */
+export function gammaSeries(x: number, shape: number): number {
   let term = 1;
   let sum = 1;
   for (let n = 1; term > 1e-17 * sum; n++) {
@@ -27,8 +46,15 @@ function series(x: number, shape: number): number {
   return sum;
 }
 
-/** Upper tail over the prefactor, by the modified Lentz method. */
-function fraction(x: number, shape: number): number {
+/**
+ * Upper tail over the prefactor, for x at least about the shape.
+ * @param x above 0
+ * @param shape above 0, finite
+ * @returns the ratio, above 0
+ * @source continued fraction of the incomplete gamma function, by the modified Lentz method
+ * @checked through the grids of gamma and chi-square
+ */
+export function gammaFraction(x: number, shape: number): number {
   let b = x + 1 - shape;
   let c = 1e300;
   let d = 1 / b;
@@ -73,7 +99,7 @@ function tail(x: number, shape: number, upper: boolean): number {
   if (shape < 1 && x < 1.5 && upper) return upperOfSmallShape(x, shape);
   const left = x < shape + (shape < 1 ? 0.5 : 1);
   const near = prefactor(x, shape);
-  const small = near === 0 ? 0 : near * (left ? series(x, shape) : fraction(x, shape));
+  const small = near === 0 ? 0 : near * (left ? gammaSeries(x, shape) : gammaFraction(x, shape));
   return left === upper ? 1 - Math.min(small, 1) : small;
 }
 
