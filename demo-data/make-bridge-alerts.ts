@@ -5,7 +5,7 @@ import { between, csvText, exponential, nearlyNormal } from './draw.ts';
  * Invented: 36 officers on a ship's bridge simulator acknowledge 20 alerts of each of three kinds. The seed was picked
  * among many so that the mean and the trimmed mean of the differences part ways, as the demo is there to show.
  */
-const SEED = 99;
+const SEED = 1499;
 
 const OFFICERS = 36;
 const TRIALS = 20;

@@ -5,6 +5,8 @@ import type { LineServer } from './line-server.ts';
 export interface Contender {
   readonly name: string;
   run(): Promise<number>;
+  /** What is done before the first round, if more than one run. */
+  warmUp?(): Promise<number>;
 }
 
 export interface Peer extends Contender {
@@ -18,20 +20,32 @@ function median(values: readonly number[]): number {
   return sorted.length % 2 === 1 ? upper : ((sorted[middle - 1] as number) + upper) / 2;
 }
 
-/** Our own work: repeated within one measurement until it takes a few ms, because the CPU clock is coarse. */
+/** Least time of one measurement of ours, ms, because the CPU clock is coarse; and of the warm-up before all of them. */
+const LEAST = 5;
+const WARM = 250;
+
+/** Our own work, repeated within one measurement until it is long enough to be measured. */
 export function ours(work: () => unknown): Contender {
   let times = 1;
+  const measure = async (): Promise<number> => {
+    const before = process.cpuUsage();
+    for (let i = 0; i < times; i++) await work();
+    const { user, system } = process.cpuUsage(before);
+    return (user + system) / 1000;
+  };
   return {
     name: 'ours',
     run: async () => {
       for (;;) {
-        const before = process.cpuUsage();
-        for (let i = 0; i < times; i++) await work();
-        const { user, system } = process.cpuUsage(before);
-        const ms = (user + system) / 1000;
-        if (ms >= 5 || times >= 4096) return ms / times;
+        const ms = await measure();
+        if (ms >= LEAST || times >= 4096) return ms / times;
         times *= 2;
       }
+    },
+    warmUp: async () => {
+      let last = await measure();
+      for (let spent = last; spent < WARM; spent += last) last = Math.max(await measure(), 0.01);
+      return last;
     },
   };
 }
@@ -50,8 +64,8 @@ export function asked(server: LineServer, name: string, line: string, goal: numb
   };
 }
 
-/** Long work is asked fewer times: enough rounds for about this much time, at least three. */
-const ROUND_TIME = 4000;
+/** Long work is asked fewer times: as many rounds as this much time allows, from one to nine. */
+const ROUND_TIME = 3000;
 
 /**
  * Asks all in turn, A B C A B C, after one warm-up each.
@@ -59,9 +73,9 @@ const ROUND_TIME = 4000;
  */
 export async function inTurns(contenders: readonly Contender[]): Promise<number[]> {
   const warm: number[] = [];
-  for (const each of contenders) warm.push(await each.run());
+  for (const each of contenders) warm.push(await (each.warmUp?.() ?? each.run()));
   const once = warm.reduce((sum, ms) => sum + ms, 0);
-  const rounds = Math.min(9, Math.max(3, Math.floor(ROUND_TIME / Math.max(once, 1))));
+  const rounds = Math.min(9, Math.max(1, Math.floor(ROUND_TIME / Math.max(once, 1))));
   const times = contenders.map((): number[] => []);
   for (let round = 0; round < rounds; round++) {
     for (const [i, each] of contenders.entries()) times[i]?.push(await each.run());

@@ -13,7 +13,32 @@ bootstrap_boot <- function(n, b, corrected) {
   }
 }
 
-work_of <- list(bootstrap_boot = bootstrap_boot)
+yuen_parts <- function(x) {
+  n <- length(x)
+  g <- floor(0.2 * n)
+  h <- n - 2 * g
+  s <- sort(x)
+  w <- pmin(pmax(s, s[g + 1]), s[n - g])
+  c(mean(s[(g + 1):(n - g)]), var(w) * (n - 1) / (h * (h - 1)))
+}
+
+bootstrap_t_r <- function(n, b) {
+  x <- scores(n)
+  y <- scores(2 * n)[(n + 1):(2 * n)] + 0.5
+  a <- x - mean(x, trim = 0.2)
+  c2 <- y - mean(y, trim = 0.2)
+  function() {
+    t <- numeric(b)
+    for (i in seq_len(b)) {
+      p <- yuen_parts(sample(a, n, replace = TRUE))
+      q <- yuen_parts(sample(c2, n, replace = TRUE))
+      t[i] <- abs(p[1] - q[1]) / sqrt(p[2] + q[2])
+    }
+    quantile(t, 0.95)
+  }
+}
+
+work_of <- list(bootstrap_boot = bootstrap_boot, bootstrap_t_r = bootstrap_t_r)
 
 input <- file("stdin", "r")
 while (length(line <- readLines(input, n = 1)) > 0) {
