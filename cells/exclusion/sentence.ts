@@ -53,7 +53,7 @@ function beyondParts(settings: ExclusionSettings, context: Context, design: Desi
     { key: 'cutoff', label: 'cutoff' },
     settings.cutoff,
     context,
-    { min: 0.5, max: 10, step: 0.1, unit: '', none: 'no cutoff in' },
+    { min: 0.5, max: 10, step: 0.1, unit: '', none: 'any number of' },
     (value) => ({ ...settings, cutoff: value }),
   );
   const measure = choiceBlank(
