@@ -21,7 +21,6 @@ interface Task {
   readonly env: JobEnv;
   readonly resolve: (result: unknown) => void;
   readonly reject: (reason: unknown) => void;
-  readonly onAbort: () => void;
   /** How often a worker broke while it ran. */
   broke: number;
 }
@@ -39,6 +38,8 @@ interface Place {
 class Crew {
   readonly #places: readonly Place[];
   readonly #create: () => CrewWorker;
+  /** The tasks that go with a signal and have not settled. */
+  readonly #watched = new WeakMap<AbortSignal, Set<Task>>();
   #queue: Task[] = [];
   #next = 1;
   #closed = false;
@@ -52,10 +53,8 @@ class Crew {
     return new Promise((resolve, reject) => {
       if (this.#closed) throw new Error('the runner is closed');
       env.signal.throwIfAborted();
-      const id = this.#next++;
-      const onAbort = () => this.#cancel(task);
-      const task: Task = { id, name, args, env, resolve, reject, onAbort, broke: 0 };
-      env.signal.addEventListener('abort', onAbort, { once: true });
+      const task: Task = { id: this.#next++, name, args, env, resolve, reject, broke: 0 };
+      this.#watch(task);
       this.#queue.push(task);
       this.#share();
     });
@@ -67,6 +66,22 @@ class Crew {
     this.#queue = [];
     for (const place of this.#places) this.#end(place);
     for (const task of left) this.#settle(task, () => task.reject(new Error('the runner is closed')));
+  }
+
+  /** A computation cut into many shards has one signal, so each signal gets one listener. */
+  #watch(task: Task): void {
+    const { signal } = task.env;
+    const known = this.#watched.get(signal);
+    if (known !== undefined) {
+      known.add(task);
+      return;
+    }
+    const tasks = new Set([task]);
+    this.#watched.set(signal, tasks);
+    signal.addEventListener('abort', () => {
+      this.#watched.delete(signal);
+      for (const each of tasks) this.#cancel(each);
+    });
   }
 
   #share(): void {
@@ -144,7 +159,7 @@ class Crew {
   }
 
   #settle(task: Task, settle: () => void): void {
-    task.env.signal.removeEventListener('abort', task.onAbort);
+    this.#watched.get(task.env.signal)?.delete(task);
     settle();
   }
 
