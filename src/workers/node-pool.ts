@@ -11,7 +11,7 @@ const MARK = 'standfast worker';
 export interface NodePoolOptions {
   /** Makes a thread that serves jobs; by default one that runs the bundle this module stands in. */
   readonly create?: () => Worker;
-  /** How many at most; by default as many as the machine has cores, up to 8. */
+  /** How many at most; by default as many as the machine has cores, 2 to 8. */
   readonly size?: number;
 }
 
@@ -19,7 +19,7 @@ export interface NodePoolOptions {
 export function nodePool<T extends JobTable = Jobs>({ create, size }: NodePoolOptions = {}): RunnerOf<T> {
   // A command is one bundled file, and every bundle with this module in it serves jobs when it is run as a thread.
   const make = create ?? (() => new Worker(new URL(import.meta.url), { workerData: MARK }));
-  return crewOf<T>(() => crewWorker(make()), size ?? Math.min(8, availableParallelism()));
+  return crewOf<T>(() => crewWorker(make()), size ?? Math.min(8, Math.max(2, availableParallelism())));
 }
 
 /** Serves jobs in this thread, whichever way it was started. */

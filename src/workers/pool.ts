@@ -6,13 +6,14 @@ import type { FromWorker } from './messages.ts';
 export interface PoolOptions {
   /** Makes a classic worker that runs entry.ts. */
   readonly create: () => Worker;
-  /** How many at most; by default as many as the machine has cores, up to 8. */
+  /** How many at most; by default as many as the machine has cores, 2 to 8. */
   readonly size?: number;
 }
 
 /** A runner with the workers of a page. */
 export function workerPool<T extends JobTable = Jobs>({ create, size }: PoolOptions): RunnerOf<T> {
-  return crewOf<T>(() => crewWorker(create()), size ?? Math.min(8, Math.max(1, navigator.hardwareConcurrency || 2)));
+  // Two even on one core: a short job need not wait behind a long one that is being stopped.
+  return crewOf<T>(() => crewWorker(create()), size ?? Math.min(8, Math.max(2, navigator.hardwareConcurrency || 2)));
 }
 
 function crewWorker(worker: Worker): CrewWorker {
