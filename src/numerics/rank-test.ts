@@ -4,7 +4,8 @@ import { type Alternative, normalP } from './inference.ts';
 /**
  * Rounds differences of decimal scores so that decimal ties are ties.
  * @param x differences, finite
- * @returns each rounded to 10 decimals, or to more where all are below .01 in size (so that the unit does not matter)
+ * @returns each rounded to 10 decimals, or to more where all are between 1e-13 and .01 in size (so that the unit does
+ *   not matter)
  * @source convention of test/reference/cases/README.md, `wilcoxon_signed_rank`
  * @checked by hand: .3 - .2 ties with .2 - .1
  */
@@ -12,7 +13,8 @@ export function decimalTies(x: Float64Array): Float64Array {
   let size = 0;
   for (const value of x) size = Math.max(size, Math.abs(value));
   let unit = 1e10;
-  for (let s = size; s > 0 && s < 0.01; s *= 10) unit *= 10;
+  // Below 1e-13 the differences are the rounding of equal scores rather than scores in a small unit.
+  for (let s = size; s > 1e-13 && s < 0.01; s *= 10) unit *= 10;
   return x.map((value) => {
     const scaled = value * unit;
     return Math.abs(scaled) < 2 ** 53 ? Math.round(scaled) / unit + 0 : value;
