@@ -10,6 +10,7 @@ import type { EffectSize, Limits } from './finding.ts';
 
 export interface EffectContext {
   readonly level: number;
+  /** Resamples of a bootstrap interval; 0 = no interval (the strip's specifications need none). */
   readonly resamples: number;
   readonly seed: number;
 }
@@ -22,7 +23,7 @@ export function pairedEffects(x: Float64Array, y: Float64Array, context: EffectC
   const d = pairedD(x, y, { level: context.level });
   const n = x.length;
   const draws = new Float64Array(context.resamples);
-  if (n >= 2 && d.dAverage !== null) {
+  if (n >= 2 && d.dAverage !== null && context.resamples > 0) {
     resample(
       [n],
       context.resamples,
@@ -53,7 +54,7 @@ export function robustPairedEffect(differences: Float64Array, trim: number, cont
   const value = robustOne(s, g, constant);
   const draws = new Float64Array(context.resamples);
   const buffer = new Float64Array(s.length);
-  if (value !== null && s.length >= 2) {
+  if (value !== null && s.length >= 2 && context.resamples > 0) {
     resample(
       [s.length],
       context.resamples,
@@ -114,7 +115,7 @@ function twoGroupDraws(
 ): Float64Array {
   const draws = new Float64Array(context.resamples);
   const [first, second] = [new Float64Array(a.length), new Float64Array(b.length)];
-  if (!run) return draws;
+  if (!run || context.resamples === 0) return draws;
   resample(
     [a.length, b.length],
     context.resamples,
@@ -198,6 +199,7 @@ function bootstrapped(
 ): EffectSize {
   const how = `percentile bootstrap, B = ${context.resamples}`;
   if (value === null) return { name, value, interval: null, how, reason: reason ?? 'not defined for these scores' };
+  if (context.resamples === 0) return { name, value, interval: null, how, reason: 'not resampled' };
   const interval = percentileLimits(draws, context.level);
   return interval
     ? { name, value, interval, how }

@@ -110,7 +110,15 @@ function specificationsOf(
   const { factor, first, second } = comparison;
   const samples = takeSamples(scoreDesign(design, scores.score), factor, first, second);
   const { unit, direction, rows } = base.roles;
-  const args: CompareArgs = { samples, comparison, unit, direction, withheld: withholdsTextbook(rules, rows) };
+  // Effect sizes of the strip's lines are not shown, so that no line but the planned one resamples.
+  const settings = own ? comparison : { ...comparison, resamples: 0 };
+  const args: CompareArgs = {
+    samples,
+    comparison: settings,
+    unit,
+    direction,
+    withheld: withholdsTextbook(rules, rows),
+  };
   const kept = keptKey(design, factor, [first, second]);
   return choices(result, own).map(({ estimator, trim }) => {
     const finding = compareRow(estimator, args, trim);
