@@ -34,7 +34,7 @@ const USUAL = [
  * They are only pointed out: a guess would change the data.
  *
  * @param values one double a row, NaN = missing
- * @returns each such number, the farthest first
+ * @returns each such number, in the order found
  * @source numbers in use as codes, and the half range: common practice
  */
 export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
@@ -44,7 +44,7 @@ export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
   const left = new Set<number>();
   for (;;) {
     const all = rangeWithout(values, left);
-    const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end));
+    const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end) && !left.has(end));
     if (code === undefined) return found;
     judged.add(code);
     const rest = rangeWithout(values, new Set([...left, code]));
@@ -52,6 +52,8 @@ export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
     if (rest.count < 3 || !(reach > 0)) continue;
     if (code >= rest.low - reach && code <= rest.high + reach) continue;
     left.add(code);
+    // Without this one, a code judged before may turn out to be far from the rest.
+    judged.clear();
     found.push({ value: code, ...occurrences(values, code), low: rest.low, high: rest.high });
   }
 }

@@ -93,7 +93,7 @@ function slowNumber(bytes: Uint8Array, start: number, end: number, mark: number,
  * @returns true where the double is at or beyond 2^53 and the text has no decimal mark and no exponent
  */
 export function losesDigits(bytes: Uint8Array, start: number, end: number, value: number): boolean {
-  if (Math.abs(value) < 2 ** 53) return false;
+  if (!(Math.abs(value) >= 2 ** 53)) return false;
   for (let i = end - 1; i > start; i--) {
     const digit = (bytes[i] as number) - ZERO;
     if (digit < 0 || digit > 9) return false;
