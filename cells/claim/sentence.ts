@@ -52,6 +52,6 @@ export function claimSentence(settings: ClaimSettings, context: Context): Part[]
       ...settings,
       title,
     })),
-    '.',
+    ...(/[.!?]$/.test(settings.title.trim()) ? [] : ['.']),
   ];
 }

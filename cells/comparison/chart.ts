@@ -9,6 +9,8 @@ const LABEL = 262;
 const NUMBERS = 236;
 const P = 68;
 const NARROW = 560;
+/** Room under the plot for the axis and its title. */
+const AXIS = 42;
 
 /** One drawn row. */
 export interface DrawnRow {
@@ -70,7 +72,7 @@ export function ghostRows(
 export function comparisonChart(result: Result, context: ViewContext): Settings {
   const rows = sameUnitRows(result).length;
   const narrow = context.width < NARROW;
-  const step = narrow ? 46 : 27;
+  const step = narrow ? 62 : 27;
   const plot = narrow ? context.width - 12 : context.width - LABEL - NUMBERS;
   const { unit } = result.scores.design.roles;
   const { first, second } = result.comparison;
@@ -94,9 +96,9 @@ export function comparisonChart(result: Result, context: ViewContext): Settings 
   return {
     width: Math.max(120, plot),
     height: rows * step,
-    padding: { left: narrow ? 6 : LABEL, right: narrow ? 6 : NUMBERS, top: 2, bottom: 2 },
+    padding: { left: narrow ? 6 : LABEL, right: narrow ? 6 : NUMBERS, top: 2, bottom: AXIS },
     autosize: { type: 'none' },
-    layer: [...marks(x, y, narrow ? 7 : 0), ...texts(y, { narrow, plot })],
+    layer: [...marks(x, y, narrow ? 18 : 0), ...texts(y, { narrow, plot })],
   } as unknown as Settings;
 }
 
@@ -107,8 +109,9 @@ function marks(x: Channel, y: Channel, yOffset: number): Channel[] {
   const hold = { condition: { test: planned, value: 'var(--hold)' }, value: 'var(--soft)' };
   return [
     {
+      data: { values: [{ zero: 0 }] },
       mark: { type: 'rule', strokeDash: [3, 3] },
-      encoding: { x: { ...x, datum: 0 }, color: { value: 'var(--soft)' } },
+      encoding: { x: { ...x, field: 'zero' }, color: { value: 'var(--soft)' } },
     },
     {
       data: { name: 'ghost' },
@@ -163,7 +166,7 @@ function texts(y: Channel, place: { narrow: boolean; plot: number }): Channel[] 
     { ...channel, transform: [{ filter: 'datum.planned' }], mark: { ...channel.mark, fontWeight: 'bold' } },
   ];
   if (narrow) {
-    return [...bold(text('label', 0, 'left', -11)), ...bold(text('numbers', plot, 'right', -11))];
+    return [...bold(text('label', 0, 'left', -18)), ...bold(text('numbers', 0, 'left', 0))];
   }
   return [
     ...bold(text('label', -LABEL, 'left', 0)),

@@ -24,7 +24,7 @@ export function comparisonNotes(result: Result): Note[] {
     },
   ];
   if (result.left.length > 0) {
-    const named = result.left.slice(0, 3).map((each) => `${each.participant} (${each.why})`);
+    const named = result.left.slice(0, 3).map((each) => `${noun} ${each.participant} (${each.why})`);
     const more = result.left.length - named.length;
     notes.push({ type: 'note', text: `Not compared: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.` });
   }

@@ -1,8 +1,8 @@
 import { tableFromStored } from '../../src/data/stored.ts';
-import { asLevels, columnOf, missingCount, type Table } from '../../src/data/table.ts';
+import { asLevels, missingCount, type Table } from '../../src/data/table.ts';
 import { defineKind, type Note, Refusal, type TableOut } from '../kind.ts';
 import { count, counted } from '../numbers.ts';
-import { type DataSettings, dataSentence, guessParticipant } from './sentence.ts';
+import { type DataSettings, dataSentence } from './sentence.ts';
 
 /** What the data cell shows beside the table. */
 export interface DataDetail {
@@ -49,9 +49,6 @@ function dataNotes(table: Table, detail: DataDetail): Note[] {
     const words = missing.map((column) => `${column.name} ${count(missingCount(column))}`);
     notes.push({ type: 'note', text: `Missing values: ${words.join(', ')}.` });
   }
-  const who = columnOf(table, guessParticipant(table) ?? '');
-  if (who)
-    notes.push({ type: 'note', text: `${who.name} has ${count(asLevels(who).levels.length)} different values.` });
   return notes;
 }
 

@@ -62,7 +62,7 @@ function designNotes(design: Design): Note[] {
     });
   }
   if (design.missingCells.length > 0) {
-    const named = design.missingCells.slice(0, 4).map((each) => `${each.participant} under ${each.condition}`);
+    const named = design.missingCells.slice(0, 4).map((each) => `${noun} ${each.participant} under ${each.condition}`);
     const more = design.missingCells.length - named.length;
     notes.push({
       type: 'caution',

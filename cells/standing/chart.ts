@@ -96,8 +96,9 @@ export function stripChart(context: ViewContext): Settings {
         encoding: { x: { ...x, field: 'x' }, color: { value: 'var(--ink)' } },
       },
       {
+        data: { values: [{ zero: 0 }] },
         mark: { type: 'rule', strokeDash: [3, 3] },
-        encoding: { y: { ...y, datum: 0 }, color: { value: 'var(--soft)' } },
+        encoding: { y: { ...y, field: 'zero' }, color: { value: 'var(--soft)' } },
       },
       {
         data: { name: 'lines' },
