@@ -1,6 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { canonicalJson } from '../../src/worksheet/canonical.ts';
 
+// The examples of RFC 8785 are quoted from memory.
 describe('canonicalJson', () => {
   test('agrees with RFC 8785 section 3.2.2: literals, numbers and strings', () => {
     const source = String.raw`{

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { sha256 } from '../../src/worksheet/digest.ts';
 
 describe('sha256', () => {
-  // FIPS 180-2 appendix B.1 to B.3; the empty message is of the NIST short messages.
+  // FIPS 180-2 appendix B.1 to B.3, and the empty message of the NIST short messages; quoted from memory.
   test.each([
     ['', 'e3b0c44298fc1c149afbf4c8996fb92427ae41e4649b934ca495991b7852b855'],
     ['abc', 'ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad'],
