@@ -2,10 +2,7 @@ import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, expect } from 'vitest';
 import { type Served, serveFolder } from '../../src/replay/serve.ts';
 import { launchBrowser } from './launch-browser.ts';
-
-interface Exposed {
-  readonly standfast?: { readonly engine: { idle(): Promise<void> } };
-}
+import { waitForIdle } from './wait-for-idle.ts';
 
 export interface OpenOptions {
   /** What follows the address: "#id", "standfast.html". */
@@ -20,8 +17,8 @@ export interface OpenOptions {
 
 export interface OpenedPage {
   readonly page: Page;
-  /** Console errors, thrown errors, policy violations and requests to anywhere else, in order. */
-  readonly problems: readonly string[];
+  /** Console errors, thrown errors, policy violations and requests to anywhere else, in order; a test takes out its own. */
+  readonly problems: string[];
   /** Resolves when every cell is settled and the picture of it is painted. */
   idle(): Promise<void>;
 }
@@ -32,21 +29,6 @@ export interface PageHarness {
   openAddress(address: string, options?: OpenOptions): Promise<OpenedPage>;
   readonly browser: Browser;
   readonly address: string;
-}
-
-/** Resolves when the engine is idle and two frames have passed since; rejects after half a minute. */
-export async function waitForIdle(page: Page): Promise<void> {
-  const until = Date.now() + 30_000;
-  while (!(await page.evaluate(() => (globalThis as Exposed).standfast?.engine !== undefined))) {
-    if (Date.now() > until) throw new Error('the page did not come up within 30 s');
-    await new Promise((done) => setTimeout(done, 25));
-  }
-  await page.evaluate(async () => {
-    await (globalThis as Exposed).standfast?.engine.idle();
-    const frame = () => new Promise((done) => requestAnimationFrame(done));
-    await frame();
-    await frame();
-  });
 }
 
 async function watch(page: Page, origin: string, problems: string[]): Promise<void> {
