@@ -7,6 +7,7 @@ import './head-view.ts';
 import './log-sheet.ts';
 import './points.ts';
 import './sheet-view.ts';
+import type { StemView } from './stem-view.ts';
 import './stem-view.ts';
 import './worksheets-sheet.ts';
 import { type CellModel, computedOf } from './cell-model.ts';
@@ -14,6 +15,7 @@ import { CellModels } from './cell-models.ts';
 import { claimOf, plannedOf } from './hold-reference.ts';
 import { LightElement } from './light-element.ts';
 import type { Page } from './page.ts';
+import { saidOf } from './said.ts';
 import { incomingSheet, keysSheet, openConditionsSheet, saveSheet } from './small-sheets.ts';
 import { stripModel } from './strip-model.ts';
 import { thenView } from './then-view.ts';
@@ -21,6 +23,9 @@ import { dependentsOf } from './wiring.ts';
 
 /** Below this width the notes fold under their cell and the stem is a thin line. */
 const WIDE = 1100;
+
+type StemFlow = StemView['cells'][number];
+
 const EMPTY: ReadonlySet<string> = new Set();
 
 /** The whole page: head, cells between stem and margin, foot, and the sheet that is open. */
@@ -38,6 +43,7 @@ export class AppView extends LightElement {
   /** What the live region says. */
   declare live: string;
   readonly #models = new CellModels();
+  #stemCells: readonly StemFlow[] = [];
   #stop: () => void = () => undefined;
   #stopLive: () => void = () => undefined;
   readonly #resized = new ResizeObserver(() => this.#measure());
@@ -149,10 +155,15 @@ export class AppView extends LightElement {
     const cells = models.map((model) => {
       const computed = computedOf(model.state);
       const shown = computed !== undefined && model.state.status !== 'veiled';
-      return { id: model.cell.id, flow: shown ? (model.kind?.flow?.(computed, model.resolved) ?? null) : null };
+      const flow = shown && model.kind !== undefined ? saidOf(model.kind, computed, model.resolved).flow : null;
+      return { id: model.cell.id, flow };
     });
+    const before = this.#stemCells;
+    const same = (cell: StemFlow, i: number): boolean => cell.id === before[i]?.id && cell.flow === before[i]?.flow;
+    if (cells.length !== before.length || !cells.every(same)) this.#stemCells = cells;
     const dependents = pointed === null ? EMPTY : dependentsOf(page.worksheet, pointed);
-    return html`<sf-stem .cells=${cells} .pointed=${pointed} .dependents=${dependents}></sf-stem>`;
+    return html`<sf-stem
+      .cells=${this.#stemCells} .pointed=${pointed} .dependents=${dependents}></sf-stem>`;
   }
 
   #banner(): TemplateResult | typeof nothing {

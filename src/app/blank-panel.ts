@@ -48,6 +48,7 @@ export class BlankPanel extends LightElement {
     this.#place();
     // the editor inside draws a moment later
     await new Promise((resolve) => requestAnimationFrame(resolve));
+    this.#place();
     const wanted =
       '[role=option][tabindex="0"], input.figure, textarea, input[type=checkbox]:not(:disabled), input, button';
     const first = this.querySelector<HTMLElement>('.filter') ?? this.querySelector<HTMLElement>(wanted);

@@ -14,11 +14,12 @@ function titled(page: Page, id: string): string {
   return cell === undefined ? 'cell' : titleOf(page.parts.registry, cell);
 }
 
-/** Puts the focus on a part of the page once it is drawn. */
-export function focusOn(selector: string): void {
+/** Puts the focus on a part of the page once it is drawn: on the first selector that finds one. */
+export function focusOn(...selectors: readonly string[]): void {
   const look = (left: number): void => {
-    const found = document.querySelector<HTMLElement>(selector);
-    if (found !== null) found.focus();
+    const all = selectors.map((selector) => document.querySelector<HTMLElement>(selector));
+    const found = all.find((each) => each !== null);
+    if (found !== undefined && found !== null) found.focus();
     else if (left > 0) requestAnimationFrame(() => look(left - 1));
   };
   requestAnimationFrame(() => requestAnimationFrame(() => look(3)));
@@ -44,7 +45,7 @@ export function addCell(page: Page, after: string | null, kind: Kind): void {
   if (added === null) return;
   open.edit(`${titleOf(registry, cellOf(added.worksheet, added.id) as Cell)} added`, () => added.worksheet);
   page.show({ panel: null });
-  focusOn(`[data-cell="${added.id}"] [data-blank], [data-cell="${added.id}"]`);
+  focusOn(`[data-cell="${added.id}"] [data-blank]`, `[data-cell="${added.id}"]`);
 }
 
 export function duplicateCell(page: Page, id: string): void {

@@ -1,5 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import './blank-panel.ts';
+import type { Note, Part } from '../../cells/kind.ts';
 import { count } from '../../cells/numbers.ts';
 import { arrangeView } from './arrange-view.ts';
 import { moveCell } from './cell-actions.ts';
@@ -8,8 +9,9 @@ import { type CellModel, computedOf } from './cell-model.ts';
 import { startDrag } from './drag-cell.ts';
 import { LightElement } from './light-element.ts';
 import { notesView } from './notes-view.ts';
-import { outputView } from './output-view.ts';
+import { outputView, progressView } from './output-view.ts';
 import type { Page } from './page.ts';
+import { saidOf } from './said.ts';
 import { sentenceView } from './sentence-view.ts';
 import { thenView } from './then-view.ts';
 
@@ -42,6 +44,7 @@ export class CellView extends LightElement {
       data-cell=${cell.id}
       data-kind=${cell.kind}
       data-status=${state.status}
+      aria-busy=${state.status === 'computing'}
       aria-labelledby="name-${cell.id}"
       @keydown=${(event: KeyboardEvent) => cellKey(page, cell.id, event)}
     >
@@ -57,28 +60,29 @@ export class CellView extends LightElement {
                 : nothing
             }
           </h2>
-          ${this.narrow ? this.#counts() : nothing}
+          ${this.narrow ? this.#counts() : nothing} ${progressView(model)}
           <div class="arranging">${arrangeView(page, model)}</div>
         </div>
         <div class="say serif" data-part="sentence">
           ${kind === undefined ? cell.kind : sentenceView(page, cell.id, this.#parts(), model.openBlank)}
         </div>
         ${this.#panel()} ${outputView(page, model)}
+        ${this.narrow ? notesView(this.#notes(), true) : nothing}
         ${this.last ? nothing : thenView(page, cell.id, model.openPanel === 'then', false)}
       </div>
-      ${notesView(this.#notes(), this.narrow)}
+      ${this.narrow ? nothing : notesView(this.#notes(), false)}
     </section>`;
   }
 
-  #parts(): ReturnType<NonNullable<CellModel['kind']>['sentence']> {
+  #parts(): readonly Part[] {
     const { kind, cell, context } = this.model;
     return kind?.sentence(cell.settings, context) ?? [];
   }
 
-  #notes(): ReturnType<NonNullable<NonNullable<CellModel['kind']>['notes']>> {
+  #notes(): readonly Note[] {
     const { kind, state, resolved } = this.model;
     const computed = state.status === 'fresh' || state.status === 'computing' ? computedOf(state) : undefined;
-    return computed === undefined ? [] : (kind?.notes?.(computed, resolved) ?? []);
+    return computed === undefined || kind === undefined ? [] : saidOf(kind, computed, resolved).notes;
   }
 
   #panel(): TemplateResult | typeof nothing {
@@ -92,8 +96,8 @@ export class CellView extends LightElement {
   #counts(): TemplateResult | typeof nothing {
     const { kind, state, resolved } = this.model;
     const computed = computedOf(state);
-    const flow = computed === undefined ? undefined : kind?.flow?.(computed, resolved);
-    if (flow === undefined) return nothing;
+    const flow = computed === undefined || kind === undefined ? null : saidOf(kind, computed, resolved).flow;
+    if (flow === null) return nothing;
     const aside =
       (flow.setAside ?? 0) > 0
         ? html`<span class="aside-count">${count(flow.setAside ?? 0)} set aside</span>`

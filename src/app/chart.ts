@@ -78,7 +78,7 @@ export class ChartView extends LightElement {
   async #draw(): Promise<void> {
     const place = this.querySelector<HTMLElement>('.chart-in');
     if (this.spec === undefined || place === null || !this.isConnected) return;
-    const colours = coloursOf(this);
+    const colours = coloursOf();
     const key = JSON.stringify([this.spec, colours]);
     if (key === this.#key && this.#shown !== null) {
       await this.#give(this.#shown);
@@ -91,7 +91,7 @@ export class ChartView extends LightElement {
   }
 
   async #give(shown: Result): Promise<void> {
-    const changed = Object.entries(this.data).filter(([name, rows]) => rows !== this.#rows[name]);
+    const changed = Object.entries(this.data).filter(([name, rows]) => !sameRows(rows, this.#rows[name]));
     if (changed.length === 0) return;
     for (const [name, rows] of changed) shown.view.data(name, [...rows]);
     this.#rows = this.data;
@@ -108,7 +108,7 @@ export class ChartView extends LightElement {
   /** The figure for a file: always in the light colours. */
   async #made(): Promise<Result | null> {
     if (this.spec === undefined) return null;
-    const colours = coloursOf(this, 'light');
+    const colours = coloursOf('light');
     const place = document.createElement('div');
     return embed(place, specOf(this.spec, this.data, colours), optionsOf(colours, 'svg'));
   }
@@ -124,11 +124,16 @@ export class ChartView extends LightElement {
   async #savePng(): Promise<void> {
     const made = await this.#made();
     if (made === null) return;
-    made.view.background(coloursOf(this, 'light').sheet);
+    made.view.background(coloursOf('light').sheet);
     const canvas = await made.view.toCanvas(2);
     made.finalize();
     canvas.toBlob((blob) => blob !== null && download(blob, `${this.label || 'figure'}.png`));
   }
+}
+
+/** Whether a figure need not be given these rows again. */
+function sameRows(a: Rows, b: Rows | undefined): boolean {
+  return a === b || (b !== undefined && a.length === b.length && JSON.stringify(a) === JSON.stringify(b));
 }
 
 /** The specification as drawn: named rows filled in, the page's colours, nothing of its own settings for embedding. */
@@ -150,6 +155,8 @@ function optionsOf(colours: Colours, renderer: 'canvas' | 'svg'): EmbedOptions {
     loader: refusing,
     config: chartConfig(colours),
     tooltip: false,
+    // an empty ghost or band is no fault: only errors are told
+    logLevel: 1,
   } as unknown as EmbedOptions;
 }
 

@@ -24,17 +24,13 @@ export class FootView extends LightElement {
   declare strip: StripModel;
   declare open: boolean;
   declare naming: string | null;
+  #watched: Element | null = null;
   readonly #resized = new ResizeObserver(() => this.#makeRoom());
 
   constructor() {
     super();
     this.open = true;
     this.naming = null;
-  }
-
-  override connectedCallback(): void {
-    super.connectedCallback();
-    this.#resized.observe(this);
   }
 
   override disconnectedCallback(): void {
@@ -49,7 +45,12 @@ export class FootView extends LightElement {
   }
 
   protected override updated(_changed: PropertyValues): void {
-    this.#makeRoom();
+    const foot = this.querySelector('footer');
+    if (foot !== null && foot !== this.#watched) {
+      this.#resized.disconnect();
+      this.#resized.observe(foot);
+      this.#watched = foot;
+    }
     if (this.naming !== null) this.querySelector<HTMLInputElement>('.naming input')?.focus();
   }
 

@@ -89,11 +89,10 @@ export class HeadView extends LightElement {
     ${word('redo', 'Redo', () => open.redo(), this.redoLabel === null, this.redoLabel ?? '')}
     ${word('log', `Decision log \u00b7 ${worksheet.log.length}`, sheet('log'))}
     ${
-      worksheet.reference === null
-        ? word('hold', 'Hold as reference', () => holdReference(page), !this.mayHold)
-        : word('hold', 'Let the reference go', () => open.hold(null))
+      worksheet.opening.state === 'blind'
+        ? word('open-conditions', 'Open the conditions', sheet('open'))
+        : word('hold', 'Hold as reference', () => holdReference(page), !this.mayHold)
     }
-    ${worksheet.opening.state === 'blind' ? word('open-conditions', 'Open the conditions', sheet('open')) : nothing}
     ${word('worksheets', 'Worksheets', sheet('worksheets'))} ${word('save', 'Save a copy', sheet('save'))}
     ${word('keys', 'Keys', sheet('keys'))}
     ${word('theme', dark ? 'Light' : 'Dark', () => {

@@ -1,11 +1,28 @@
-import { html, type TemplateResult } from 'lit';
-import type { Computed, Kind, TableOut } from '../../cells/kind.ts';
+import { html, nothing, type TemplateResult } from 'lit';
+import type { Computed, Kind } from '../../cells/kind.ts';
 import './table-out.ts';
 import { type CellModel, computedOf } from './cell-model.ts';
 import type { Page } from './page.ts';
+import { saidOf } from './said.ts';
 
-/** What stands under a cell's sentence: its result, or in words why there is none. */
+/**
+ * What stands under a cell's sentence: its result, or in words why there is none. The result keeps its place in the
+ * tree while it is worked out again, so that figures are given new rows instead of being made anew.
+ */
 export function outputView(page: Page, model: CellModel): TemplateResult {
+  const { state, kind } = model;
+  const computed = computedOf(state);
+  const old = state.status === 'failed' || state.status === 'waiting';
+  return html`${message(page, model)}${
+    computed === undefined || kind === undefined
+      ? nothing
+      : html`<div class=${old ? 'was' : state.status === 'computing' ? 'becoming' : ''} ?inert=${old}>
+          ${result(page, model, kind, computed)}
+        </div>`
+  }`;
+}
+
+function message(page: Page, model: CellModel): TemplateResult | typeof nothing {
   const { state, kind } = model;
   if (state.status === 'unknown-kind' || kind === undefined) {
     return html`<p class="plainly" data-part="unknown">
@@ -18,15 +35,15 @@ export function outputView(page: Page, model: CellModel): TemplateResult {
     case 'left-out':
       return html`<p class="plainly" data-part="left-out">Left out for now.</p>`;
     case 'failed':
-      return html`<p class="failed" data-part="failed">${state.sentence}</p>
-        ${last(page, model, kind)}`;
+      return html`<p class="failed" data-part="failed">${state.sentence}</p>`;
     case 'waiting':
-      return html`<p class="plainly" data-part="waiting">Waiting for ${model.waitingFor}.</p>
-        ${last(page, model, kind)}`;
+      return html`<p class="plainly" data-part="waiting">Waiting for ${model.waitingFor}.</p>`;
     case 'computing':
-      return html`${progress(state.progress)}${last(page, model, kind)}`;
+      return state.last === undefined
+        ? html`<p class="plainly late" data-part="computing">Being worked out \u2026</p>`
+        : nothing;
     case 'fresh':
-      return result(page, model, kind, state.computed);
+      return nothing;
   }
 }
 
@@ -38,23 +55,19 @@ function veil(page: Page): TemplateResult {
   </div>`;
 }
 
-function progress(share: number): TemplateResult {
-  return html`<p class="progress" data-part="progress">
-    <progress max="1" .value=${share} aria-label="share worked out"></progress>
-    <span>${share > 0 ? `${Math.round(100 * share)} % worked out` : 'being worked out'}</span>
-  </p>`;
-}
-
-/** What it came to before, faded, so that the page does not jump. */
-function last(page: Page, model: CellModel, kind: Kind): TemplateResult | null {
-  const computed = computedOf(model.state);
-  if (computed === undefined) return null;
-  return html`<div class="was" aria-hidden="true" inert>${result(page, model, kind, computed)}</div>`;
+/** Share worked out, beside the cell's name; it shows only where the work takes a while. */
+export function progressView(model: CellModel): TemplateResult | typeof nothing {
+  const { state } = model;
+  if (state.status !== 'computing') return nothing;
+  return html`<span class="progress late" data-part="progress">
+    <progress max="1" .value=${state.progress} aria-label="share worked out"></progress>
+    ${state.progress > 0 ? `${Math.round(100 * state.progress)} % worked out` : 'being worked out'}
+  </span>`;
 }
 
 function result(page: Page, model: CellModel, kind: Kind, computed: Computed<unknown>): TemplateResult {
   const view = page.parts.views[model.cell.kind];
-  const tables: readonly TableOut[] = kind.tables?.(computed, model.resolved) ?? [];
+  const { tables } = saidOf(kind, computed, model.resolved);
   const context = {
     cellId: model.cell.id,
     settings: model.resolved,
@@ -67,7 +80,7 @@ function result(page: Page, model: CellModel, kind: Kind, computed: Computed<unk
   return html`<div class="out" data-part="output">${view?.(computed as Computed<never, never>, context)}</div>
     ${
       tables.length === 0
-        ? null
+        ? nothing
         : html`<div class="tables">${tables.map((table) => html`<sf-table .table=${table}></sf-table>`)}</div>`
     }`;
 }

@@ -77,7 +77,7 @@ export class PointsView extends LightElement {
     if (strip === undefined || width === 0) return;
     const scale = pointScale(strip);
     const box = stripBox(strip.rows, width);
-    const colours = coloursOf(this);
+    const colours = coloursOf();
     drawLimits(this.#canvas('.limits', box), strip, scale, box, colours);
     const { x, mark } = strip;
     const was = this.#drawn;
@@ -96,7 +96,7 @@ export class PointsView extends LightElement {
   #saveSvg(): void {
     const strip = this.points;
     if (strip === undefined) return;
-    const svg = stripSvg(strip, pointScale(strip), stripBox(strip.rows, 652), coloursOf(this, 'light'));
+    const svg = stripSvg(strip, pointScale(strip), stripBox(strip.rows, 652), coloursOf('light'));
     download(new Blob([svg], { type: 'image/svg+xml' }), `${this.label || 'scores'}.svg`);
   }
 
@@ -106,7 +106,7 @@ export class PointsView extends LightElement {
     const box = stripBox(strip.rows, 652);
     const canvas = document.createElement('canvas');
     const context = sized(canvas, box, 2);
-    const colours = coloursOf(this, 'light');
+    const colours = coloursOf('light');
     const scale = pointScale(strip);
     if (context !== null) {
       context.fillStyle = colours.sheet;

@@ -44,7 +44,8 @@ export class StemView extends LightElement {
   }
 
   protected override updated(changed: PropertyValues): void {
-    if (changed.has('cells')) this.measure();
+    // the cells draw after the stem: they are measured once they have
+    if (changed.has('cells')) requestAnimationFrame(() => this.measure());
   }
 
   /** Reads where the cells stand now. */

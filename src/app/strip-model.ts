@@ -70,6 +70,8 @@ function claimWords(page: Page, id: string | undefined): string | null {
   const cell = id === undefined ? undefined : cellOf(page.worksheet, id);
   const kind = cell === undefined ? undefined : page.parts.registry[cell.kind];
   if (cell === undefined || kind === undefined) return null;
+  const { title } = cell.settings;
+  if (typeof title === 'string' && title.trim() !== '') return title;
   const parts = kind.sentence(cell.settings, page.parts.engine.context(cell.id));
   return parts.map((part) => (typeof part === 'string' ? part : part.shown)).join('');
 }

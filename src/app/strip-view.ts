@@ -58,7 +58,16 @@ export class StripView extends LightElement {
     const { now, reference, blind, hasClaim } = this.model;
     if (!hasClaim) return nothing;
     if (blind) return html`<small>estimate hidden while the conditions are hidden</small>`;
-    const held = reference === null ? nothing : html` \u00b7 reference: ${reference}`;
+    const letGo = html`<button
+      type="button"
+      class="word small"
+      data-part="let-go"
+      aria-label="let the reference go"
+      @click=${() => this.page.parts.document.hold(null)}
+    >
+      let go
+    </button>`;
+    const held = reference === null ? nothing : html` \u00b7 reference: ${reference} ${this.line ? nothing : letGo}`;
     return html`<small data-part="now">now: ${now ?? 'not worked out'}${held}</small>`;
   }
 
@@ -95,7 +104,7 @@ export class StripView extends LightElement {
 
 /** The verdicts in a sentence are told by weight and colour as well as by their words. */
 export function verdicts(text: string): TemplateResult {
-  const parts = text.split(/(supported in (?:all )?[\d,]+|undecided in [\d,]+|contradicted in [\d,]+)/i);
+  const parts = text.split(/((?:supported|undecided|contradicted) in (?:\d[\d,]*\d|\d))/i);
   return html`${parts.map((part, i) => {
     if (i % 2 === 0) return part;
     const none = /\b0$/.test(part);

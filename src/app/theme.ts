@@ -45,16 +45,24 @@ export function followSystem(changed: (theme: Theme) => void): void {
   matchMedia('(prefers-color-scheme: dark)').addEventListener('change', () => changed(firstTheme()));
 }
 
-/** The colours in force at an element, or those of another theme. */
-export function coloursOf(element: Element, theme?: Theme): Colours {
-  if (theme === undefined) return read(element);
+const known = new Map<Theme, Colours>();
+
+/** The colours of the theme in force, or of another one. */
+export function coloursOf(theme: Theme = themeNow()): Colours {
+  const before = known.get(theme);
+  if (before !== undefined) return before;
   const probe = document.createElement('div');
   probe.dataset.theme = theme;
   probe.hidden = true;
   document.body.append(probe);
   const colours = read(probe);
   probe.remove();
+  known.set(theme, colours);
   return colours;
+}
+
+function themeNow(): Theme {
+  return document.documentElement.dataset.theme === 'dark' ? 'dark' : 'light';
 }
 
 function read(element: Element): Colours {
