@@ -81,9 +81,9 @@ export class LevelTable {
     const to = from + end - start;
     if (to > this.pool.length) this.pool = grown(this.pool, new Uint8Array(Math.max(to, this.pool.length * 2)));
     this.pool.set(bytes.subarray(start, end), from);
-    if (code + 1 >= this.bounds.length) {
-      this.bounds = grown(this.bounds, new Uint32Array(this.bounds.length * 2));
-      this.hashes = grown(this.hashes, new Int32Array(this.hashes.length * 2));
+    if (code >= this.hashes.length) {
+      this.hashes = grown(this.hashes, new Int32Array(code * 2));
+      this.bounds = grown(this.bounds, new Uint32Array(code * 2 + 1));
     }
     this.bounds[code + 1] = to;
     this.hashes[code] = hash;

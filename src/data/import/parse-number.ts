@@ -1,4 +1,4 @@
-import { DOT } from './bytes.ts';
+import { COMMA, DOT } from './bytes.ts';
 
 const ZERO = 0x30;
 const EXACT_POWERS = Float64Array.from({ length: 23 }, (_, power) => Number(`1e${power}`));
@@ -84,21 +84,24 @@ function slowNumber(bytes: Uint8Array, start: number, end: number, mark: number,
 }
 
 /**
- * Whether bytes write a whole number of more digits than a double holds exactly, as long participant codes do.
+ * Whether bytes write a whole number that a double does not give back, as long participant codes do.
  *
  * @param bytes UTF-8 text of a number
  * @param start its first byte
  * @param end one past its last byte
  * @param value the double it was read as
- * @returns true where the double is at or beyond 2^53 and the text has no decimal mark and no exponent
+ * @returns true where the double is at or beyond 2^53, the text has no decimal mark and no exponent, and the double's
+ *   shortest form is another text
  */
 export function losesDigits(bytes: Uint8Array, start: number, end: number, value: number): boolean {
   if (!(Math.abs(value) >= 2 ** 53)) return false;
-  for (let i = end - 1; i > start; i--) {
+  let digits = '';
+  for (let i = end - 1; i >= start; i--) {
     const digit = (bytes[i] as number) - ZERO;
-    if (digit < 0 || digit > 9) return false;
+    if (digit >= 0 && digit < 10) digits = digit + digits;
+    else if (bytes[i] === DOT || bytes[i] === COMMA || bytes[i] === 0x65 || bytes[i] === 0x45) return false;
   }
-  return true;
+  return digits.replace(/^0+/, '') !== String(Math.abs(value));
 }
 
 /**

@@ -96,13 +96,13 @@ function scanRow<N extends CellReader, L extends CellReader>(
     if (at === start) {
       if (at < length && (bytes[at] === QUOTE || bytes[at] === SPACE)) at = skipQuoted(bytes, at, options);
       while (at < length && stops[bytes[at] as number] === 0) at++;
-      if (column >= columns && (column > columns || !isBlank(bytes, start, at))) throw ragged(bytes, begin, options);
       if (at > start) (number ?? level)?.read(bytes, start, at, row);
     }
-    if (at >= length || bytes[at] !== delimiter) {
-      if (column + 1 < columns) throw ragged(bytes, begin, options);
-      return at;
-    }
+    const isLast = at >= length || bytes[at] !== delimiter;
+    if (column >= columns && !(isLast && isBlank(bytes, start, at))) throw ragged(bytes, begin, options);
+    if (!isLast) continue;
+    if (column + 1 < columns) throw ragged(bytes, begin, options);
+    return at;
   }
 }
 
