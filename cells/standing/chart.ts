@@ -18,12 +18,17 @@ export interface StripLine {
 /** Rows for the drawing: lines in their groups, labels with counts, the place of the analysis in force. */
 export function stripRows(sweep: Sweep, context: ViewContext) {
   const lines: StripLine[] = [];
+  const drawn = sweep.groups.map(
+    ({ order }) => order.filter((index) => sweep.specifications[index]?.finding.sameUnit).length,
+  );
+  const places = drawn.reduce((sum, n) => sum + (n === 0 ? 0 : n + GAP), 0);
+  const perPlace = context.width / Math.max(1, places);
   const labels: { x: number; label: string }[] = [];
   let at = 0;
   for (const { group, order } of sweep.groups) {
     const members = order.filter((index) => sweep.specifications[index]?.finding.sameUnit);
     if (members.length === 0) continue;
-    labels.push({ x: at + (members.length - 1) / 2, label: `${group} \u00b7 ${count(members.length)}` });
+    labels.push({ x: at + (members.length - 1) / 2, label: fittingLabel(group, members.length, perPlace) });
     for (const index of members) {
       const specification = sweep.specifications[index];
       if (!specification || specification.finding.estimate === null) continue;
@@ -35,6 +40,26 @@ export function stripRows(sweep: Sweep, context: ViewContext) {
     at += GAP;
   }
   return { lines: withEdges(lines), labels, ghost: ghostOf(sweep, context, at - GAP) };
+}
+
+/** Width of a character of a label, about, in px. */
+const CHARACTER = 6.2;
+
+/** Names short enough for a narrow group. */
+const SHORT: Readonly<Record<string, string>> = {
+  'differences of trimmed means': 'of margins',
+  'trimmed means': 'trimmed',
+  'winsorized means': 'winsorized',
+  'means, separate variances': 'Welch',
+  pseudomedians: 'H\u2013L',
+  shifts: 'shift',
+};
+
+/** "trimmed means \u00b7 21", or what of it fits over the group's own places. */
+function fittingLabel(group: string, members: number, perPlace: number): string {
+  const room = (members + GAP - 0.5) * perPlace;
+  const wordings = [group, SHORT[group] ?? group].map((words) => `${words} \u00b7 ${count(members)}`);
+  return [...wordings, count(members)].find((words) => words.length * CHARACTER <= room) ?? '';
 }
 
 /** A one-sided interval runs to the edge of what is drawn. */
