@@ -1,5 +1,6 @@
 import { type Design, fullCondition, participantNoun } from '../../src/analysis/design.ts';
-import { applyRule, type Flagged } from '../../src/analysis/exclusion.ts';
+import { applyRule } from '../../src/analysis/exclusion.ts';
+import type { Flagged } from '../../src/analysis/flagging.ts';
 import type { Rule } from '../../src/analysis/rules.ts';
 import { defineKind, type Num, numberOf, type TableOut } from '../kind.ts';
 import { count, counted, fixed, percent, plural } from '../numbers.ts';

@@ -1,5 +1,5 @@
 import type { Design } from '../../src/analysis/design.ts';
-import { participantMeans } from '../../src/analysis/exclusion.ts';
+import { participantMeans } from '../../src/analysis/flagging.ts';
 import { rng } from '../../src/numerics/rng.ts';
 import type { ExclusionDetail } from './kind.ts';
 

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { type Design, declareDesign, type Roles } from '../../src/analysis/design.ts';
-import { applyRule, applyRules, flagExtremeBlind, withoutRules } from '../../src/analysis/exclusion.ts';
+import { applyRule, applyRules, withoutRules } from '../../src/analysis/exclusion.ts';
+import { flagExtremeBlind } from '../../src/analysis/flagging.ts';
 import type { ExtremeRule, Rule } from '../../src/analysis/rules.ts';
 import { rng } from '../../src/numerics/rng.ts';
 import { tableOf } from '../support/tables.ts';
