@@ -1,6 +1,8 @@
 import { createHash } from 'node:crypto';
+import { readFileSync } from 'node:fs';
 import type { Plugin, Rolldown } from 'vite';
 import { defineConfig, type ViteUserConfig } from 'vitest/config';
+import { BLOCK_ID, escapeForScript } from './src/worksheet/html.ts';
 import { LongTable } from './test/support/long-table.ts';
 
 type Bundle = Rolldown.OutputBundle;
@@ -52,6 +54,16 @@ interface Parts {
   readonly licences: string;
 }
 
+/** The worksheet the single file carries, so that it can be replayed as it is. */
+const FIRST_DEMO = 'demo-data/bridge-alerts.standfast.json';
+
+/** The single file: the page with a worksheet in it. */
+function withWorksheet(page: string, json: string): string {
+  const block = `<script type="application/json" id="${BLOCK_ID}">${escapeForScript(json)}</script>\n`;
+  const end = page.lastIndexOf('</body>');
+  return `${page.slice(0, end)}${block}${page.slice(end)}`;
+}
+
 /** The page with its script, styles and licences inside it, under the policy. */
 function inlinedPage(html: string, { script, styles, licences }: Parts): string {
   const bare = html
@@ -95,7 +107,8 @@ function onePage(): Plugin {
         });
         for (const file of [chunk, ...sheets]) delete bundle[file.fileName];
         page.source = source;
-        this.emitFile({ type: 'asset', fileName: 'standfast.html', source });
+        const single = withWorksheet(source, readFileSync(FIRST_DEMO, 'utf8'));
+        this.emitFile({ type: 'asset', fileName: 'standfast.html', source: single });
       },
     },
   };

@@ -1,6 +1,8 @@
+import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import { pathToFileURL } from 'node:url';
 import { describe, expect, test } from 'vitest';
+import { findWorksheetBlock } from '../../src/worksheet/html.ts';
 import { accessibilityProblems } from '../support/axe.ts';
 import { usePage } from '../support/page.ts';
 
@@ -25,6 +27,12 @@ describe('the built page', () => {
       /^\s*supported in \d+ of \d+ analyses/,
     );
     expect(page.workers().length).toBeGreaterThan(0);
+  });
+
+  test('invariance: the single file carries the first demo, ready to be replayed', () => {
+    const found = findWorksheetBlock(readFileSync('dist/standfast.html', 'utf8'));
+    const demo: unknown = JSON.parse(readFileSync('demo-data/bridge-alerts.standfast.json', 'utf8'));
+    expect(found.ok && JSON.parse(found.text)).toEqual(demo);
   });
 
   test('refuses: a script that is put into the page, and a request to anywhere', async () => {
