@@ -1,5 +1,4 @@
-import { largestSize, noSpread } from '../inference.ts';
-import { mean } from '../moments.ts';
+import { noSpread } from '../inference.ts';
 import { sorted } from '../order.ts';
 import { requireScores } from '../scores.ts';
 import { normalQuantile, normalUpper } from '../tails/normal.ts';
@@ -35,9 +34,17 @@ export function shapiroWilk(x: Float64Array): ShapiroWilk {
   if (n > 5000) return { w: null, p: null, reason: 'more than 5000 scores: the approximation ends there' };
   const s = sorted(x);
   const range = s[n - 1]! - s[0]!;
-  if (noSpread(range, largestSize(s))) return { w: null, p: null, reason: 'all scores are equal' };
-  const missing = missingShare(s, range, weights(n));
+  if (noSpread(range, Math.max(-s[0]!, s[n - 1]!))) return { w: null, p: null, reason: 'all scores are equal' };
+  const missing = missingShare(s, range, weightsOf(n));
   return { w: 1 - missing, p: pOf(missing, n) };
+}
+
+/** Weights last used: a sweep checks many samples of one size. */
+let last: { readonly n: number; readonly weights: Float64Array } = { n: 0, weights: new Float64Array(0) };
+
+function weightsOf(n: number): Float64Array {
+  if (last.n !== n) last = { n, weights: weights(n) };
+  return last.weights;
 }
 
 /** Weights of the upper half, largest score first; the lower half has the opposite sign. */
@@ -62,15 +69,18 @@ function weights(n: number): Float64Array {
 /** 1 - W, computed so that it keeps its digits when W is close to 1. */
 function missingShare(s: Float64Array, range: number, a: Float64Array): number {
   const n = s.length;
-  const x = s.map((score) => (score - s[0]!) / range);
-  const center = mean(x);
+  const low = s[0]!;
+  // Shares of the range keep sums of any size of score in hand.
+  let total = 0;
+  for (let i = 0; i < n; i++) total += (s[i]! - low) / range;
+  const center = total / n;
   let aa = 0;
   let xx = 0;
   let ax = 0;
   for (let i = 0; i < n; i++) {
     const mirror = n - 1 - i;
     const weight = i === mirror ? 0 : i < mirror ? -a[i]! : a[mirror]!;
-    const d = x[i]! - center;
+    const d = (s[i]! - low) / range - center;
     aa += weight * weight;
     xx += d * d;
     ax += weight * d;

@@ -39,14 +39,16 @@ export function theilSen(x: Float64Array, y: Float64Array, options: { readonly l
   if (count === 0) return { slope: null, intercept: null, interval: null, reason: 'x does not vary' };
   const middle = (count - 1) >> 1;
   const low = select(slopes, middle);
-  const slope = count % 2 === 1 ? low : low + (select(slopes, middle + 1) - low) / 2;
+  const slope = count % 2 === 1 ? low : low + (select(slopes, middle + 1, middle + 1) - low) / 2;
   const n = x.length;
   const variance = (n * (n - 1) * (2 * n + 5) - tieCounts(x).spread - tieCounts(y).spread) / 18;
   const reach = normalQuantileUpper((1 - level) / 2) * Math.sqrt(Math.max(0, variance));
   const first = Math.max(roundHalfEven((count - reach) / 2) - 1, 0);
   const last = Math.min(roundHalfEven((count + reach) / 2), count - 1);
-  const interval: Limits = [select(slopes, first), select(slopes, last)];
-  return { slope, intercept: median(y) - slope * median(x), interval };
+  // The two halves are already apart: each limit is looked for on its own side.
+  const lower = first <= middle ? select(slopes, first, 0, middle) : slopes[first]!;
+  const upper = last > middle ? select(slopes, last, middle + 1) : slopes[last]!;
+  return { slope, intercept: median(y) - slope * median(x), interval: [lower, upper] };
 }
 
 function pairwiseSlopes(x: Float64Array, y: Float64Array): Float64Array {

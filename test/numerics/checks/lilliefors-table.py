@@ -1,4 +1,4 @@
-"""Simulated upper-tail points of the Lilliefors distance, written to src/numerics/checks/lilliefors-table.ts by hand.
+"""Simulated upper-tail points of the Lilliefors distance, as copied into src/numerics/checks/lilliefors-table.ts.
 
 For each n: RUNS normal samples, D with estimated mean and SD, scaled by sqrt(n) - .01 + .85 / sqrt(n) (Stephens 1974),
 points exceeded with the probabilities in ALPHA. Run with Python 3, NumPy 1.24, SciPy 1.10; about ten minutes.

@@ -30,11 +30,12 @@ interface Found {
   readonly lower: number | null;
   readonly upper: number | null;
   readonly center: number | null;
+  readonly spread?: number | null;
 }
 
-/** A limit that has no spread behind it stands at the middle itself in the cases. */
+/** In the cases a limit with a spread of 0 behind it stands at the middle itself; without any spread there is none. */
 function limitOrCenter(limit: number | null, found: Found): number | null {
-  return limit ?? found.center;
+  return limit ?? (found.spread === null ? null : found.center);
 }
 
 function flaggedRows(rows: readonly CaseRow[], flags: Uint8Array): number[] {
@@ -47,12 +48,9 @@ function limitRule(find: (x: Float64Array, args: CaseArgs) => Found): CaseMethod
     const outcome = stringArg(args, 'outcome');
     const cells = cellsBy(usedRows(data, args), stringsArg(args, 'by')).map((cell) => {
       const x = numbersOf(cell.rows, outcome);
-      const { lower, upper, center, ...others } = find(x, args);
-      const limits = {
-        lower: limitOrCenter(lower, { lower, upper, center }),
-        upper: limitOrCenter(upper, { lower, upper, center }),
-      };
-      return { cell: cell.key, ...others, ...limits, rows: flaggedRows(cell.rows, flagOutside(x, limits)) };
+      const found = find(x, args);
+      const limits = { lower: limitOrCenter(found.lower, found), upper: limitOrCenter(found.upper, found) };
+      return { cell: cell.key, ...found, ...limits, rows: flaggedRows(cell.rows, flagOutside(x, limits)) };
     });
     const rows = cells.flatMap((cell) => cell.rows).sort((a, b) => a - b);
     return args.by === undefined ? { ...cells[0], rows } : { cells, rows };
