@@ -49,8 +49,7 @@ export class BlankPanel extends LightElement {
     // the editor inside draws a moment later
     await new Promise((resolve) => requestAnimationFrame(resolve));
     this.#place();
-    const wanted =
-      '[role=option][tabindex="0"], input.figure, textarea, input[type=checkbox]:not(:disabled), input, button';
+    const wanted = '[role=option][tabindex="0"], textarea, input:not(:disabled), button:not(:disabled)';
     const first = this.querySelector<HTMLElement>('.filter') ?? this.querySelector<HTMLElement>(wanted);
     first?.focus({ preventScroll: true });
     if (first instanceof HTMLInputElement && first.type === 'text') first.select();
