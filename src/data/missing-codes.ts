@@ -38,45 +38,36 @@ const USUAL = [
  * @source numbers in use as codes, and the half range: common practice
  */
 export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
-  if (!mayHoldCodes(values)) return [];
   const found: SuspiciousCode[] = [];
   const judged = new Set<number>();
-  const left = new Set<number>();
+  let all = rangeWithout(values, [], Number.NaN);
   for (;;) {
-    const all = rangeWithout(values, left);
-    const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end) && !left.has(end));
+    const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end));
     if (code === undefined) return found;
     judged.add(code);
-    const rest = rangeWithout(values, new Set([...left, code]));
+    const left = found.map((each) => each.value);
+    const rest = rangeWithout(values, left, code);
     const reach = (rest.high - rest.low) / 2;
     if (rest.count < 3 || !(reach > 0)) continue;
     if (code >= rest.low - reach && code <= rest.high + reach) continue;
-    left.add(code);
+    found.push({ value: code, ...occurrences(values, code), low: rest.low, high: rest.high });
+    all = rest;
     // Without this one, a code judged before may turn out to be far from the rest.
     judged.clear();
-    found.push({ value: code, ...occurrences(values, code), low: rest.low, high: rest.high });
   }
 }
 
-/** A code far from the rest is the lowest or the highest value; columns of a million rows are left after one look. */
-function mayHoldCodes(values: Float64Array): boolean {
-  let low = Infinity;
-  let high = -Infinity;
-  for (let row = 0; row < values.length; row++) {
-    const value = values[row] as number;
-    if (value < low) low = value;
-    if (value > high) high = value;
-  }
-  return USUAL.includes(low) || USUAL.includes(high);
-}
-
-function rangeWithout(values: Float64Array, left: ReadonlySet<number>): { low: number; high: number; count: number } {
+function rangeWithout(
+  values: Float64Array,
+  left: readonly number[],
+  code: number,
+): { low: number; high: number; count: number } {
   let low = Infinity;
   let high = -Infinity;
   let count = 0;
   for (let row = 0; row < values.length; row++) {
     const value = values[row] as number;
-    if (Number.isNaN(value) || left.has(value)) continue;
+    if (value === code || Number.isNaN(value) || (left.length > 0 && left.includes(value))) continue;
     if (value < low) low = value;
     if (value > high) high = value;
     count++;

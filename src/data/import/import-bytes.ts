@@ -118,15 +118,16 @@ function rowsAtMost(bytes: Uint8Array, lineEnds: number): number {
 
 function shapeWarnings(columns: readonly Column[], rows: number): string[] {
   const warnings: string[] = [];
+  const [first, ...others] = columns as [Column, ...Column[]];
   let empty = 0;
-  let first = 0;
+  let emptyRow = 0;
   for (let row = 0; row < rows; row++) {
-    if (columns.some((column) => !isMissing(column, row))) continue;
-    if (empty++ === 0) first = row + 1;
+    if (!isMissing(first, row) || others.some((column) => !isMissing(column, row))) continue;
+    if (empty++ === 0) emptyRow = row + 1;
   }
   if (empty > 0) {
     warnings.push(
-      `${counted(empty, 'row')} ${empty === 1 ? 'is' : 'are'} empty in every column (first: row ${grouped(first)}).`,
+      `${counted(empty, 'row')} ${empty === 1 ? 'is' : 'are'} empty in every column (first: row ${grouped(emptyRow)}).`,
     );
   }
   if (columns.length === 1) {

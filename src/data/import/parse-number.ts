@@ -105,8 +105,8 @@ export function losesDigits(bytes: Uint8Array, start: number, end: number, value
 }
 
 /**
- * Reads a field that is a number written plainly: a minus sign perhaps, digits, a decimal mark perhaps, digits; at most
- * 15 of them, no leading zero, no exponent, no quotation marks.
+ * Reads a field that is a number written plainly: a minus sign perhaps, digits, a decimal mark perhaps, digits; no
+ * leading zero, no exponent, no quotation marks; at most 19 digits, of whole numbers at most 15.
  *
  * @param bytes UTF-8 text
  * @param start first byte of the field
@@ -115,7 +115,7 @@ export function losesDigits(bytes: Uint8Array, start: number, end: number, value
  * @param values gets the number at [row], or NaN where the field is anything else
  * @param row index into the values
  * @returns index of the byte that ends the field, or start where it is anything else
- * @source as parseNumber
+ * @source as parseNumber; beyond 15 digits divideLong
  * @checked against Number(text), exactly
  */
 export function scanNumber(
@@ -129,24 +129,71 @@ export function scanNumber(
   const length = bytes.length;
   const negative = start < length && bytes[start] === 0x2d;
   const begin = negative ? start + 1 : start;
+  const safe = begin + SAFE_DIGITS;
   let at = begin;
   let value = 0;
+  let tail = 0;
   let point = -1;
   for (; at < length; at++) {
     const byte = bytes[at] as number;
     const digit = byte - ZERO;
-    if (digit >= 0 && digit < 10) value = value * 10 + digit;
-    else if (byte === mark && point < 0) point = at;
+    if (digit >= 0 && digit < 10) {
+      if (at < safe) value = value * 10 + digit;
+      else tail = tail * 10 + digit;
+    } else if (byte === mark && point < 0) point = at;
     else break;
   }
   const decimals = point < 0 ? 0 : at - point - 1;
   const count = at - begin - (point < 0 ? 0 : 1);
   const leadingZero = count > 1 && bytes[begin] === ZERO && point !== begin + 1;
-  if (count < 1 || count > SAFE_DIGITS || leadingZero || (at < length && stops[bytes[at] as number] === 0)) {
+  const long = at > safe;
+  const isPlain = count > 0 && !leadingZero && (at >= length || stops[bytes[at] as number] === 1);
+  if (!isPlain || (long && (point < 0 || point >= safe || count > 19))) {
     values[row] = Number.NaN;
     return start;
   }
-  if (decimals > 0) value /= EXACT_POWERS[decimals] as number;
+  if (long) value = divideLong(value, at - safe, tail, decimals);
+  else if (decimals > 0) value /= EXACT_POWERS[decimals] as number;
   values[row] = negative && value !== 0 ? -value : value;
-  return at;
+  return Number.isNaN(value) ? start : at;
+}
+
+/**
+ * The double nearest to (head * 10^more + tail) / 10^decimals.
+ *
+ * @param head whole number below 10^15
+ * @param more digits of the tail, 1 to 5
+ * @param tail whole number below 10^more
+ * @param decimals 1 to 22
+ * @returns the quotient, or NaN where the arithmetic cannot tell which of two neighbours is nearer
+ * @source T. J. Dekker 1971, A floating-point technique for extending the available precision, sections 4 and 5
+ *   (product and quotient of doubled precision); A. Ziv 1991 (round only where the error cannot change the result)
+ * @checked against Number(text), exactly
+ */
+export function divideLong(head: number, more: number, tail: number, decimals: number): number {
+  const scale = EXACT_POWERS[more] as number;
+  const divisor = EXACT_POWERS[decimals] as number;
+  const product = head * scale;
+  // Both parts are small whole numbers, so their sum is exact.
+  const rest = productError(head, scale, product) + tail;
+  const high = product + rest;
+  const low = rest - (high - product);
+  const quotient = high / divisor;
+  const back = quotient * divisor;
+  const remainder = high - back - productError(quotient, divisor, back) + low;
+  const correction = remainder / divisor;
+  const slack = Math.abs(correction) * 2 ** -40 + quotient * 2 ** -95;
+  const result = quotient + (correction + slack);
+  return result === quotient + (correction - slack) ? result : Number.NaN;
+}
+
+/** a * b minus its rounded value, exactly. */
+function productError(a: number, b: number, product: number): number {
+  const splitA = a * 134217729;
+  const highA = splitA - (splitA - a);
+  const lowA = a - highA;
+  const splitB = b * 134217729;
+  const highB = splitB - (splitB - b);
+  const lowB = b - highB;
+  return lowA * lowB - (product - highA * highB - lowA * highB - highA * lowB);
 }

@@ -25,21 +25,32 @@ const HOPELESS = 1000;
  * @returns the column and warnings
  */
 export function typeLevels(texts: Texts, mayHaveDecimalComma: boolean): ColumnRead {
-  const counts = countLevels(texts);
+  const counts =
+    texts.levels.slice(0, HOPELESS).some(mayBeNumber) || texts.levels.length === 0 ? countLevels(texts) : null;
+  if (counts === null) return asText(texts, []);
   const dot = tryNumbers(texts.levels, counts, DOT);
   const comma = dot.others > 0 && mayHaveDecimalComma ? tryNumbers(texts.levels, counts, COMMA) : null;
   const best = comma !== null && comma.others < dot.others ? comma : dot;
   if (best.others === 0 && best.long < 0) return asNumbers(texts, best.values, best === comma ? COMMA : DOT);
   const date = asDates(texts, counts);
   if (date !== null) return date;
-  const warnings = numericLook(texts, counts, best);
-  const held = texts.levels.filter((level) => missingCode(level) !== null);
+  return asText(texts, numericLook(texts, counts, best));
+}
+
+/** Numbers and dates begin so; a column of missing codes alone counts as numbers. */
+function mayBeNumber(level: string): boolean {
+  return /^\s*[+\-\u2212]?[.,]?\d/.test(level) || missingCode(level.trim()) !== null;
+}
+
+function asText({ name, codes, levels }: Texts, look: readonly string[]): ColumnRead {
+  const warnings = [...look];
+  const held = levels.filter((level) => missingCode(level) !== null);
   if (held.length > 0 && warnings.length === 0) {
     warnings.push(
-      `Column ${texts.name} holds ${listed(held.map(quoted))} as text; recode it where it stands for a missing value.`,
+      `Column ${name} holds ${listed(held.map(quoted))} as text; recode it where it stands for a missing value.`,
     );
   }
-  return { column: { name: texts.name, type: 'text', codes: texts.codes, levels: texts.levels }, warnings };
+  return { column: { name, type: 'text', codes, levels }, warnings };
 }
 
 interface Attempt {

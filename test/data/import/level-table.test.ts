@@ -7,13 +7,15 @@ describe('LevelTable', () => {
   it('agrees with Map on 10,000 texts of 2,000 levels, exactly', () => {
     const table = new LevelTable();
     const known = new Map<string, number>();
+    const wrong: string[] = [];
     for (let i = 0; i < 10_000; i++) {
       const text = `p${(i * 7919) % 2000}${i % 3 === 0 ? '\u00e9' : ''}`.slice(0, 2 + (i % 5));
       const code = known.get(text) ?? known.size;
       known.set(text, code);
       const bytes = encode(text);
-      expect(table.codeOf(bytes, 0, bytes.length, hashOf(bytes))).toBe(code);
+      if (table.codeOf(bytes, 0, bytes.length, hashOf(bytes)) !== code) wrong.push(text);
     }
+    expect(wrong).toEqual([]);
     expect(table.levels()).toEqual([...known.keys()]);
   });
 
