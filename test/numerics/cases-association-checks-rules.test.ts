@@ -10,7 +10,7 @@ const folder = fileURLToPath(new URL('../reference/cases', import.meta.url));
 const { lilliefors_test: lilliefors, ...others } = methods;
 
 test('agrees with the outside cases of association, regression, checks, outlier rules, transformations', {
-  timeout: 60_000,
+  timeout: 120_000,
 }, () => {
   const result = checkCases(folder, new Set(Object.keys(others)), others);
   expect(result.misses).toEqual([]);
@@ -27,7 +27,9 @@ interface Case {
 
 // The cases' p_table goes linearly in p between few points of another simulation, which overstates p between them; ours has
 // more points. D and the published formula must agree as closely as everything else.
-test('agrees with the outside cases of Lilliefors: D and the formula 1e-9, p of the simulated table absolute .016', () => {
+test('agrees with the outside cases of Lilliefors: D and the formula 1e-9, p of the simulated table absolute .016', {
+  timeout: 120_000,
+}, () => {
   if (lilliefors === undefined) throw new Error('lilliefors_test must be offered');
   let count = 0;
   for (const file of readdirSync(folder).filter((name) => name.endsWith('.json') && name !== 'index.json')) {

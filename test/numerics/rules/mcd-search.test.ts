@@ -39,8 +39,8 @@ test('theory: the squared distances of a fit to its own rows add up to (rows - 1
 
 test('invariance: the seed of the starts does not change the subset found', () => {
   const stream = rng(3);
-  const data = matrixFromColumns([0, 1, 2].map(() => Float64Array.from({ length: 40 }, () => stream.uniform())));
-  const found = [1, 2].map((seed) => smallestDeterminant(data, 22, below(seed))?.logDeterminant as number);
+  const data = matrixFromColumns([0, 1, 2].map(() => Float64Array.from({ length: 24 }, () => stream.uniform())));
+  const found = [1, 2].map((seed) => smallestDeterminant(data, 14, below(seed))?.logDeterminant as number);
   expect(found[0]).toBeCloseTo(found[1] as number, 10);
 });
 
