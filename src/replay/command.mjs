@@ -1,7 +1,7 @@
 // Runs one of the commands of package.json in Node: bundles it into build/ when a source is newer than the bundle, then
 // calls its `main`. Nothing of the build is written to stdout, which belongs to the command.
 
-import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync } from 'node:fs';
+import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, utimesSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath, pathToFileURL } from 'node:url';
 
@@ -43,6 +43,7 @@ async function bundle(entry, target) {
   const { build } = await import('vite');
   const folder = join(root, 'build', `making-${process.pid}`);
   mkdirSync(folder, { recursive: true });
+  const started = new Date();
   try {
     await build({
       configFile: false,
@@ -60,6 +61,8 @@ async function bundle(entry, target) {
         rolldownOptions: { output: { entryFileNames: 'main.mjs', codeSplitting: false } },
       },
     });
+    // A source that changed while it was being bundled is newer than the bundle.
+    utimesSync(join(folder, 'main.mjs'), started, started);
     renameSync(join(folder, 'main.mjs'), target);
   } finally {
     rmSync(folder, { recursive: true, force: true });

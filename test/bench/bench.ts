@@ -3,7 +3,7 @@ import type { BenchRow } from './bench-row.ts';
 type BenchModule = { readonly rows: () => Promise<readonly BenchRow[]> };
 
 /** Every workload: b1.ts, b2.ts, ... and page.ts; each exports `rows`. */
-const workloads = import.meta.glob<BenchModule>(['./b[0-9]*.ts', './page.ts']);
+const workloads = import.meta.glob<BenchModule>(['./b[0-9]*.ts', './page.ts', '!./*.test.ts', '!./*-*.ts']);
 
 function number(value: number | null): string {
   if (value === null) return '-';
