@@ -34,13 +34,14 @@ const USUAL = [
  * They are only pointed out: a guess would change the data.
  *
  * @param values one double a row, NaN = missing
+ * @param range their lowest and highest value, so that most columns need not be looked through
  * @returns each such number, in the order found
  * @source numbers in use as codes, and the half range: common practice
  */
-export function suspiciousCodes(values: Float64Array): SuspiciousCode[] {
+export function suspiciousCodes(values: Float64Array, range: { low: number; high: number }): SuspiciousCode[] {
   const found: SuspiciousCode[] = [];
   const judged = new Set<number>();
-  let all = rangeWithout(values, [], Number.NaN);
+  let all = range;
   for (;;) {
     const code = [all.low, all.high].find((end) => USUAL.includes(end) && !judged.has(end));
     if (code === undefined) return found;

@@ -14,6 +14,9 @@ export interface Written {
   readonly codes: ReadonlyMap<string, number>;
   /** The first cell with a leading zero. */
   readonly leadingZero: { readonly row: number; readonly text: string } | null;
+  /** Range of the values; low > high where there is none. */
+  readonly low: number;
+  readonly high: number;
   /** The first cell with a decimal comma, where the comma is the decimal mark. */
   readonly comma: { readonly row: number; readonly text: string } | null;
 }
@@ -27,11 +30,11 @@ export interface Written {
  * @returns the column and warnings
  */
 export function numberColumn(name: string, values: Float64Array, written: Written): ColumnRead {
-  const { codes, leadingZero, comma } = written;
+  const { codes, leadingZero, comma, low, high } = written;
   const warnings = codeWarnings(name, codes);
-  for (const { value, count, row, low, high } of suspiciousCodes(values)) {
+  for (const odd of suspiciousCodes(values, { low, high })) {
     warnings.push(
-      `Column ${name} holds ${grouped(value)} in ${counted(count, 'row')} (first in row ${grouped(row)}), far from the rest (${grouped(low)} to ${grouped(high)}). It was left as it is; recode it where it stands for a missing value.`,
+      `Column ${name} holds ${grouped(odd.value)} in ${counted(odd.count, 'row')} (first in row ${grouped(odd.row)}), far from the rest (${grouped(odd.low)} to ${grouped(odd.high)}). It was left as it is; recode it where it stands for a missing value.`,
     );
   }
   if (comma !== null) {
@@ -44,7 +47,7 @@ export function numberColumn(name: string, values: Float64Array, written: Writte
       `Column ${name} was read as numbers, which do not keep leading zeros (row ${grouped(leadingZero.row)}: ${quoted(leadingZero.text)}).`,
     );
   }
-  if (values.every(Number.isNaN)) warnings.push(`Column ${name} holds no value.`);
+  if (low > high) warnings.push(`Column ${name} holds no value.`);
   return { column: { name, type: 'number', values }, warnings };
 }
 

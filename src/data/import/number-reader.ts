@@ -16,6 +16,9 @@ export class NumberReader implements CellReader {
   leadingZero: { row: number; text: string } | null = null;
   /** The first cell written with a decimal comma, where the comma is the decimal mark. */
   comma: { row: number; text: string } | null = null;
+  /** Range of the values; low > high where there is none. */
+  low = Infinity;
+  high = -Infinity;
   private readonly mark: number;
   private readonly span: Span = { start: 0, end: 0, quoted: false };
 
@@ -34,7 +37,9 @@ export class NumberReader implements CellReader {
       this.values[row] = Number.NaN;
       return start;
     }
-    return scanNumber(bytes, start, stops, this.mark, this.values, row);
+    const end = scanNumber(bytes, start, stops, this.mark, this.values, row);
+    this.widen(this.values[row] as number);
+    return end;
   }
 
   read(bytes: Uint8Array, start: number, end: number, row: number): void {
@@ -45,12 +50,18 @@ export class NumberReader implements CellReader {
     if (span.start === span.end) return;
     const value = parseNumber(bytes, span.start, span.end, this.mark);
     this.values[row] = value;
+    this.widen(value);
     if (Number.isNaN(value)) {
       const code = span.end - span.start > 4 ? null : missingCode(spanText(bytes, span));
       if (code === null) this.failed = true;
       else this.codes.set(code, (this.codes.get(code) ?? 0) + 1);
     } else if (losesDigits(bytes, span.start, span.end, value)) this.failed = true;
     else this.note(bytes, row + 1);
+  }
+
+  private widen(value: number): void {
+    if (value < this.low) this.low = value;
+    if (value > this.high) this.high = value;
   }
 
   private note(bytes: Uint8Array, row: number): void {

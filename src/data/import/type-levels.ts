@@ -105,7 +105,10 @@ function asNumbers({ name, codes, levels }: Texts, numbers: Float64Array, mark: 
   }
   const commaAt = mark === COMMA ? levels.findIndex((level) => level.includes(',')) : -1;
   const comma = commaAt < 0 ? null : { row: codes.indexOf(commaAt) + 1, text: levels[commaAt] as string };
-  return numberColumn(name, values, { codes: missing, leadingZero, comma });
+  const found = numbers.filter((number) => !Number.isNaN(number));
+  const low = found.reduce((a, b) => Math.min(a, b), Infinity);
+  const high = found.reduce((a, b) => Math.max(a, b), -Infinity);
+  return numberColumn(name, values, { codes: missing, leadingZero, comma, low, high });
 }
 
 function asDates({ name, codes, levels }: Texts, counts: Int32Array): ColumnRead | null {
