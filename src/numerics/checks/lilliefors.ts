@@ -21,7 +21,7 @@ export interface Lilliefors {
  * @returns D and p; null with a reason for fewer than 4 or equal scores
  * @throws RangeError when a score is not finite
  * @source Lilliefors 1967, J. Am. Stat. Assoc. 62, 399-402: D = max |F_n - F|; Dallal & Wilkinson 1986, Am. Stat. 40, 294-296
- * @checked outside check cases lilliefors_test, D and the formula relative 1e-9, table absolute .003
+ * @checked outside check cases lilliefors_test, D and the formula relative 1e-9, table relative 1e-6
  */
 export function lillieforsTest(x: Float64Array): Lilliefors {
   requireScores(x, 0);
