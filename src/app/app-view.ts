@@ -136,8 +136,13 @@ export class AppView extends LightElement {
       ></sf-foot>
       ${this.#sheet()}
       <div class="unseen" role="status" aria-live="polite" data-part="live">${this.live}</div>
-      <div class="unseen" id="hint-number">Arrow keys change the number, Enter opens it.</div>
-      <div class="unseen" id="hint-blank">Enter opens it.</div>`;
+      <div hidden id="hint-number">Arrow keys change the number, Enter opens it.</div>
+      <div hidden id="hint-blank">Enter opens it.</div>`;
+  }
+
+  protected override updated(_changed: PropertyValues): void {
+    const title = `${this.page.worksheet.title} \u00b7 Standfast`;
+    if (document.title !== title) document.title = title;
   }
 
   protected override firstUpdated(_changed: PropertyValues): void {

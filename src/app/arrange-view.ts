@@ -1,6 +1,6 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import * as actions from './cell-actions.ts';
-import { type CellModel, computedOf, titleOf } from './cell-model.ts';
+import { type CellModel, titleOf } from './cell-model.ts';
 import { sourcesOf } from './edits.ts';
 import type { Page } from './page.ts';
 
@@ -9,7 +9,8 @@ export function arrangeView(page: Page, model: CellModel): TemplateResult {
   const { cell } = model;
   const open = model.openPanel === 'arrange';
   const toggle = (): void => page.show({ panel: open ? null : { cellId: cell.id, part: 'arrange' }, blank: null });
-  return html`<button
+  return html`${copyWord(page, model)}
+    <button
       type="button"
       class="word quiet"
       data-part="arrange"
@@ -22,11 +23,23 @@ export function arrangeView(page: Page, model: CellModel): TemplateResult {
     ${open ? panel(page, model) : nothing}`;
 }
 
+/** One action copies the result in one plain sentence. */
+function copyWord(page: Page, { state, kind, cell, resolved }: CellModel): TemplateResult | typeof nothing {
+  if (state.status !== 'fresh' || kind === undefined) return nothing;
+  const copy = (): void => void actions.copyText(page, kind.say(state.computed, resolved), 'the result as a sentence');
+  return html`<button
+    type="button"
+    class="word quiet"
+    data-part="copy"
+    aria-label=${`copy the result as a sentence: ${titleOf(page.parts.registry, cell)}`}
+    @click=${copy}
+  >
+    copy
+  </button>`;
+}
+
 function panel(page: Page, model: CellModel): TemplateResult {
   const { id } = model.cell;
-  const computed = computedOf(model.state);
-  const say =
-    model.state.status === 'fresh' && computed !== undefined ? model.kind?.say(computed, model.resolved) : undefined;
   const close = (event: KeyboardEvent): void => {
     if (event.key !== 'Escape') return;
     event.stopPropagation();
@@ -41,11 +54,6 @@ function panel(page: Page, model: CellModel): TemplateResult {
     ${word('duplicate', 'duplicate', () => actions.duplicateCell(page, id))}
     ${word('leave-out', model.cell.leftOut === true ? 'put back' : 'leave out for now', () => actions.leaveOutCell(page, id))}
     ${word('remove', 'remove', () => actions.removeCell(page, id))}
-    ${
-      say === undefined
-        ? nothing
-        : word('copy', 'copy the result as a sentence', () => void actions.copyText(page, say, 'the result sentence'))
-    }
     ${Object.entries(model.kind?.takes ?? {}).map(([port, type]) => source(page, model, port, type))}
   </div>`;
 }

@@ -18,6 +18,8 @@ export class BlankPanel extends LightElement {
   declare blank: Blank;
   declare cellId: string;
   declare page: Page;
+  /** Closed by Escape: what was typed and not yet taken stays untaken. */
+  #givenUp = false;
 
   override connectedCallback(): void {
     super.connectedCallback();
@@ -53,13 +55,15 @@ export class BlankPanel extends LightElement {
     const first = this.querySelector<HTMLElement>('.filter') ?? this.querySelector<HTMLElement>(wanted);
     first?.focus({ preventScroll: true });
     if (first instanceof HTMLInputElement && first.type === 'text') first.select();
-    this.scrollIntoView({ block: 'nearest' });
+    this.querySelector('.panel')?.scrollIntoView({ block: 'nearest' });
   }
 
   #editor(): TemplateResult {
     const { blank, page, cellId } = this;
     const editor = blank.editor;
-    const fill = (settings: Parameters<Page['fill']>[2]): void => page.fill(cellId, blank.key, settings);
+    const fill = (settings: Parameters<Page['fill']>[2]): void => {
+      if (!this.#givenUp) page.fill(cellId, blank.key, settings);
+    };
     switch (editor.type) {
       case 'choice': {
         const choose = (value: string): void => {
@@ -84,7 +88,9 @@ export class BlankPanel extends LightElement {
       case 'number': {
         const actions = {
           set: (value: Num) => fill(editor.set(value)),
-          setShared: (id: string, value: number | null) => setShared(page, id, value),
+          setShared: (id: string, value: number | null) => {
+            if (!this.#givenUp) setShared(page, id, value);
+          },
           share: (name: string) => shareBlank(page, cellId, blank, name),
         };
         return html`<sf-number
@@ -134,6 +140,7 @@ export class BlankPanel extends LightElement {
     if (event.key !== 'Escape') return;
     event.preventDefault();
     event.stopPropagation();
+    this.#givenUp = true;
     this.#close(true);
   }
 

@@ -40,6 +40,7 @@ export class CellView extends LightElement {
     const live = recomputed === 0 ? '' : recomputed % 2 === 0 ? ' live even' : ' live odd';
     return html`<section
       class="cell${live}${cell.leftOut === true ? ' left-out' : ''}"
+      role="group"
       tabindex="-1"
       data-cell=${cell.id}
       data-kind=${cell.kind}

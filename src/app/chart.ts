@@ -118,7 +118,7 @@ export class ChartView extends LightElement {
     if (made === null) return;
     const svg = await made.view.toSVG();
     made.finalize();
-    download(new Blob([svg], { type: 'image/svg+xml' }), `${this.label || 'figure'}.svg`);
+    download(new Blob([svg], { type: 'image/svg+xml' }), `${this.getAttribute('name') ?? 'figure'}.svg`);
   }
 
   async #savePng(): Promise<void> {
@@ -127,7 +127,7 @@ export class ChartView extends LightElement {
     made.view.background(coloursOf('light').sheet);
     const canvas = await made.view.toCanvas(2);
     made.finalize();
-    canvas.toBlob((blob) => blob !== null && download(blob, `${this.label || 'figure'}.png`));
+    canvas.toBlob((blob) => blob !== null && download(blob, `${this.getAttribute('name') ?? 'figure'}.png`));
   }
 }
 

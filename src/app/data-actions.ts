@@ -1,4 +1,5 @@
 import type { Editor, Settings } from '../../cells/kind.ts';
+import { count } from '../../cells/numbers.ts';
 import type { DataBlock } from '../worksheet/format.ts';
 import { blockFromBytes, nextBlockId } from './data-block.ts';
 import { demoFile } from './demos.ts';
@@ -23,7 +24,7 @@ export function readBlock(page: Page, bytes: Uint8Array, name: string): DataBloc
 function fillFile(page: Page, cellId: string, block: DataBlock, settings: Settings): void {
   const known = page.worksheet.data.find((each) => each.fingerprint.bytes === block.fingerprint.bytes);
   const taken = known === undefined || known.name !== block.name ? block : known;
-  page.parts.document.edit(`data ${block.name} read: ${block.rows} rows`, (worksheet) =>
+  page.parts.document.edit(`data ${block.name} read: ${count(block.rows)} rows`, (worksheet) =>
     setData(worksheet, cellId, taken, settings),
   );
 }

@@ -21,12 +21,23 @@ function byName(a: string, b: string): number {
 
 export interface Demo {
   readonly name: string;
+  readonly title: string;
   readonly text: string;
+}
+
+/** The title in a worksheet's text, without reading its data. */
+function titleIn(text: string, fallback: string): string {
+  const quoted = /"title":\s*("(?:[^"\\]|\\.)*")/.exec(text)?.[1];
+  return quoted === undefined ? fallback : (JSON.parse(quoted) as string);
 }
 
 /** The demo worksheets, the one to open first in front. */
 export function demoWorksheets(): readonly Demo[] {
-  const demos = Object.entries(worksheets).map(([path, text]) => ({ name: nameOf(path), text }));
+  const demos = Object.entries(worksheets).map(([path, text]) => ({
+    name: nameOf(path),
+    title: titleIn(text, nameOf(path)),
+    text,
+  }));
   return demos.sort((a, b) => byName(a.name, b.name));
 }
 

@@ -17,7 +17,8 @@ import { WorksheetDocument } from './document.ts';
 import { IdbStore } from './idb-store.ts';
 import { makeWorker } from './make-worker.ts';
 import { newWorksheet } from './new-worksheet.ts';
-import { wantedId, worksheetFrom } from './open-worksheet.ts';
+import { remember, wantedId, worksheetFrom } from './open-worksheet.ts';
+import { listenToOtherTabs } from './other-tabs.ts';
 import { Page } from './page.ts';
 import { listenToPage } from './page-events.ts';
 import { PROGRAM_VERSION } from './program-version.ts';
@@ -84,11 +85,13 @@ async function start(): Promise<void> {
     applyTheme(changed, false);
     shown.show({ theme: changed });
   });
+  remember(worksheet.id);
   listenToPage(shown);
+  listenToOtherTabs(shown);
   Object.assign(globalThis, { standfast: { engine, document: document_ } });
   const app = document.createElement('sf-app') as AppView;
   app.page = shown;
-  document.querySelector('#standfast')?.replaceChildren(app);
+  document.querySelector('#page')?.replaceChildren(app);
 }
 
 void start();

@@ -46,7 +46,8 @@ export async function openWorksheet(page: Page, worksheet: Worksheet, keep: bool
   window.scrollTo(0, 0);
 }
 
-function remember(id: string): void {
+/** Puts the id of the open worksheet into the address, and remembers it for the next visit. */
+export function remember(id: string): void {
   const hash = `#w=${encodeURIComponent(id)}`;
   if (location.hash !== hash) location.hash = hash;
   try {

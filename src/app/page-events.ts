@@ -5,6 +5,7 @@ import type { Page } from './page.ts';
 /** What the whole page listens to: undo keys, paste, drop, leaving, and the address. */
 export function listenToPage(page: Page): void {
   document.addEventListener('keydown', (event) => undoKey(page, event));
+  document.addEventListener('pointerdown', (event) => pressedOutside(page, event));
   document.addEventListener('paste', (event) => pasted(page, event));
   document.addEventListener('dragover', (event) => dragged(event));
   document.addEventListener('dragleave', (event) => event.relatedTarget === null && showDrop(false));
@@ -17,6 +18,13 @@ export function listenToPage(page: Page): void {
     const id = wantedId();
     if (id !== null && id !== page.worksheet.id) void openSaved(page, id);
   });
+}
+
+/** The quiet disclosures of a cell close when something else is pressed. */
+function pressedOutside(page: Page, event: PointerEvent): void {
+  if (page.view.panel === null || !(event.target instanceof Element)) return;
+  if (event.target.closest('.panel, .offers, [data-part=arrange], [data-part=then]') === null)
+    page.show({ panel: null });
 }
 
 /** Whether the keys belong to a field in which one types. */

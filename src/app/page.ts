@@ -43,6 +43,8 @@ export interface PageView {
   readonly foot: boolean;
 }
 
+const SAID_MS = 6000;
+
 /** The page's one place of state: the document, the engine, and what is open; tells its parts once a frame. */
 export class Page {
   readonly parts: PageParts;
@@ -128,7 +130,10 @@ export class Page {
     open.edit(label, (worksheet) => setSettings(worksheet, cellId, settings), { merge: `${cellId}.${key}` });
   }
 
+  /** A sentence over the page; what went well goes away by itself. */
   say(text: string, wrong = false): void {
-    this.show({ banner: { text, wrong } });
+    const banner = { text, wrong };
+    this.show({ banner });
+    if (!wrong) setTimeout(() => this.view.banner === banner && this.show({ banner: null }), SAID_MS);
   }
 }

@@ -10,11 +10,30 @@ export interface StripBox {
   readonly bottom: number;
   readonly height: number;
   readonly rowHeight: number;
+  /** The words under the axis, in lines that fit. */
+  readonly words: readonly string[];
 }
 
-const AXIS = 40;
+/** Words broken between their parts where one line is too short. */
+function linesOf(words: string, width: number): readonly string[] {
+  const lines: string[] = [];
+  for (const part of words.split(' \u00b7 ')) {
+    const last = lines.at(-1);
+    const joined = last === undefined ? part : `${last} \u00b7 ${part}`;
+    if (last !== undefined && joined.length * LETTER > width) lines.push(part);
+    else lines[Math.max(0, lines.length - 1)] = joined;
+  }
+  return lines;
+}
 
-export function stripBox(rows: number, width: number): StripBox {
+const AXIS = 26;
+const LINE = 14;
+/** Width of a letter of the axis text, about. */
+const LETTER = 6;
+
+export function stripBox(strip: PointStrip, width: number): StripBox {
+  const { rows } = strip;
+  const words = linesOf(strip.axis, width - 20);
   const plot = Math.min(260, Math.max(92, rows * 5));
   const top = 4;
   return {
@@ -23,8 +42,9 @@ export function stripBox(rows: number, width: number): StripBox {
     right: width - 10,
     top,
     bottom: top + plot,
-    height: top + plot + AXIS,
+    height: top + plot + AXIS + LINE * words.length,
     rowHeight: plot / Math.max(1, rows),
+    words,
   };
 }
 
@@ -37,6 +57,11 @@ export function xAt(value: number, scale: PointScale, box: StripBox): number {
 
 export function yAt(row: number, box: StripBox): number {
   return box.top + (row + 0.5) * box.rowHeight;
+}
+
+/** Foot of a line of the words under the axis. */
+export function wordsY(box: StripBox, line: number): number {
+  return box.bottom + 34 + line * LINE;
 }
 
 export interface Band {
@@ -130,7 +155,9 @@ export function stripSvg(strip: PointStrip, scale: PointScale, box: StripBox, co
     out.push(`<path d="M${x} ${box.bottom}v4" stroke="${colours.axis}"/>`);
     out.push(`<text x="${x}" y="${box.bottom + 17}">${text}</text>`);
   }
-  out.push(`<text x="${(box.left + box.right) / 2}" y="${box.bottom + 34}">${escaped(strip.axis)}</text>`);
+  for (const [i, line] of box.words.entries()) {
+    out.push(`<text x="${(box.left + box.right) / 2}" y="${wordsY(box, i)}">${escaped(line)}</text>`);
+  }
   return `<svg xmlns="http://www.w3.org/2000/svg" width="${box.width}" height="${box.height}" font-family="${escaped(
     colours.font,
   )}" font-size="11.5" text-anchor="middle" fill="${colours.soft}">${out.join('')}</svg>`;

@@ -8,6 +8,7 @@ import {
   stripBox,
   stripSvg,
   tickLabels,
+  wordsY,
   xAt,
   yAt,
 } from './points-geometry.ts';
@@ -76,7 +77,7 @@ export class PointsView extends LightElement {
     const width = this.#width || Math.round(this.clientWidth);
     if (strip === undefined || width === 0) return;
     const scale = pointScale(strip);
-    const box = stripBox(strip.rows, width);
+    const box = stripBox(strip, width);
     const colours = coloursOf();
     drawLimits(this.#canvas('.limits', box), strip, scale, box, colours);
     const { x, mark } = strip;
@@ -96,14 +97,14 @@ export class PointsView extends LightElement {
   #saveSvg(): void {
     const strip = this.points;
     if (strip === undefined) return;
-    const svg = stripSvg(strip, pointScale(strip), stripBox(strip.rows, 652), coloursOf('light'));
-    download(new Blob([svg], { type: 'image/svg+xml' }), `${this.label || 'scores'}.svg`);
+    const svg = stripSvg(strip, pointScale(strip), stripBox(strip, 652), coloursOf('light'));
+    download(new Blob([svg], { type: 'image/svg+xml' }), 'scores.svg');
   }
 
   #savePng(): void {
     const strip = this.points;
     if (strip === undefined) return;
-    const box = stripBox(strip.rows, 652);
+    const box = stripBox(strip, 652);
     const canvas = document.createElement('canvas');
     const context = sized(canvas, box, 2);
     const colours = coloursOf('light');
@@ -114,7 +115,7 @@ export class PointsView extends LightElement {
     }
     drawLimits(context, strip, scale, box, colours);
     drawPoints(context, strip, scale, box, colours);
-    canvas.toBlob((blob) => blob !== null && download(blob, `${this.label || 'scores'}.png`));
+    canvas.toBlob((blob) => blob !== null && download(blob, 'scores.png'));
   }
 }
 
@@ -173,16 +174,10 @@ function drawPoints(
     context.arc(at, y, 2.8, 0, 2 * Math.PI);
   }
   context.stroke();
-  drawAxis(context, strip, scale, box, colours);
+  drawAxis(context, scale, box, colours);
 }
 
-function drawAxis(
-  context: CanvasRenderingContext2D,
-  strip: PointStrip,
-  scale: PointScale,
-  box: StripBox,
-  colours: StripColours,
-): void {
+function drawAxis(context: CanvasRenderingContext2D, scale: PointScale, box: StripBox, colours: StripColours): void {
   context.fillStyle = colours.axis;
   context.fillRect(box.left, box.bottom, box.right - box.left, 1);
   context.textAlign = 'center';
@@ -193,7 +188,9 @@ function drawAxis(
     context.fillStyle = colours.soft;
     context.fillText(text, x, box.bottom + 17);
   }
-  context.fillText(strip.axis, (box.left + box.right) / 2, box.bottom + 34, box.right - box.left);
+  for (const [i, line] of box.words.entries()) {
+    context.fillText(line, (box.left + box.right) / 2, wordsY(box, i), box.right - box.left);
+  }
 }
 
 customElements.define('sf-points', PointsView);

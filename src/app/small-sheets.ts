@@ -1,4 +1,5 @@
 import { html, type TemplateResult } from 'lit';
+import { count } from '../../cells/numbers.ts';
 import { CELL_KEYS } from './cell-keys.ts';
 import { fileBlanks, giveTo } from './data-actions.ts';
 import { openNew } from './open-worksheet.ts';
@@ -60,7 +61,7 @@ export function saveSheet(page: Page): TemplateResult {
   const blind = worksheet.opening.state === 'blind';
   return html`<p>
       The file holds the sentences, the decision log, the results to full precision, and the participants\u2019 data:
-      ${rows} rows. Give it only to those who may have them.
+      ${count(rows)} rows. Give it only to those who may have them.
     </p>
     ${
       blind
@@ -81,7 +82,7 @@ export function saveSheet(page: Page): TemplateResult {
 export function incomingSheet(page: Page): TemplateResult {
   const block = page.view.incoming;
   if (block === null) return html``;
-  return html`<p>${block.name}: ${block.rows} rows, ${block.columns.length} columns. Where should they go?</p>
+  return html`<p>${block.name}: ${count(block.rows)} rows, ${count(block.columns.length)} columns. Where should they go?</p>
     <div class="words column">
       ${fileBlanks(page).map(
         ({ cellId, title }) =>

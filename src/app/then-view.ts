@@ -9,7 +9,10 @@ import { offersAt } from './wiring.ts';
  */
 export function thenView(page: Page, after: string | null, open: boolean, last: boolean): TemplateResult {
   const id = after ?? '';
-  const toggle = (): void => page.show({ panel: open ? null : { cellId: id, part: 'then' }, blank: null });
+  const toggle = (): void => {
+    page.show({ panel: open ? null : { cellId: id, part: 'then' }, blank: null });
+    if (!open) focusOn('.offers button');
+  };
   return html`<div class=${last ? 'then last' : 'then'}>
     <button
       type="button"

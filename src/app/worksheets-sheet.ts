@@ -77,7 +77,7 @@ export class WorksheetsSheet extends LightElement {
           (demo) =>
             html`<li>
               <button type="button" class="word" data-demo=${demo.name} @click=${() => void openDemo(page, demo)}>
-                ${demo.name.replace(/\.standfast\.json$/, '').replace(/-/g, ' ')}
+                ${demo.title}
               </button>
             </li>`,
         )}
