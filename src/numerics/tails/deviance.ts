@@ -1,4 +1,4 @@
-/** (1 + u) log(1 + u) - u by its power series, for |u| < 0.1: no cancellation near u = 0. */
+/** (1 + u) log(1 + u) - u by its power series, for |u| < 0.4: no cancellation near u = 0. */
 function seriesNearZero(u: number): number {
   const v = u / (2 + u);
   const square = v * v;
@@ -25,7 +25,7 @@ function seriesNearZero(u: number): number {
  */
 export function deviance(x: number, mean: number): number {
   const difference = x - mean;
-  if (Math.abs(difference) < 0.1 * mean) return mean * seriesNearZero(difference / mean);
+  if (Math.abs(difference) < 0.4 * mean) return mean * seriesNearZero(difference / mean);
   if (x === 0) return mean;
   const ratio = x / mean;
   const log = ratio > 0 && ratio < Infinity ? Math.log(ratio) : Math.log(x) - Math.log(mean);

@@ -38,7 +38,7 @@ export function fallingRoot(f: (x: number) => number, start: number, step: numbe
   let [old, recent] = bracket;
   for (let i = 0; i < 300; i++) {
     let x = recent.x - (recent.f * (recent.x - old.x)) / (recent.f - old.f);
-    if (!Number.isFinite(x)) x = 0.5 * (old.x + recent.x);
+    if (!Number.isFinite(recent.f - old.f)) x = 0.5 * (old.x + recent.x);
     const next = { x, f: f(x) };
     const settled = Math.abs(x - recent.x) <= 1e-14 * Math.max(1, Math.abs(x));
     if (next.f === 0 || settled || x === old.x) return x;

@@ -3,7 +3,7 @@ import { newtonOnLog } from './newton-on-log.ts';
 import { normalQuantileUpper, normalUpper } from './normal.ts';
 import { polynomial } from './polynomial.ts';
 import { requireNumber, requirePositive, requireProbability } from './require.ts';
-import { lgamma, stirlingError } from './special.ts';
+import { lgamma, lgammaOnePlus, stirlingError } from './special.ts';
 
 const TWO_PI = 2 * Math.PI;
 /** From this shape on the first correction of the uniform normal expansion is enough. */
@@ -72,7 +72,7 @@ export function gammaFraction(x: number, shape: number): number {
 
 /** Upper tail where it is the small rest of a lower tail near one: shape below 1 and x below 1.5. */
 function upperOfSmallShape(x: number, shape: number): number {
-  const rise = Math.expm1(shape * Math.log(x) - lgamma(1 + shape));
+  const rise = Math.expm1(shape * Math.log(x) - lgammaOnePlus(shape));
   let term = 1;
   let sum = 0;
   for (let n = 1; Math.abs(term) > 1e-18; n++) {

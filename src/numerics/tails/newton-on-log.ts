@@ -24,13 +24,17 @@ export function newtonOnLog(at: (w: number) => Height, start: number, rising: bo
     if (value === 0) return w;
     if (value < 0 === rising) below = w;
     else above = w;
-    let next = w - value / slope;
+    // From a flat place the full step would lead far beyond the root.
+    const most = 20 + Math.abs(w);
+    let next = w - Math.max(-most, Math.min(most, value / slope));
+    // Asked before the bracket, whose ends rounding makes meet when the root is found.
+    if (Math.abs(next - w) <= 1e-13 * Math.max(1, Math.abs(w))) return next;
     if (!(next > below && next < above)) {
       if (Number.isFinite(above - below)) next = below + 0.5 * (above - below);
       else next = below === w ? w + reach : w - reach;
       reach *= 2;
     }
-    if (Math.abs(next - w) <= 1e-13 * Math.max(1, Math.abs(w))) return next;
+    if (next === w) return w;
     w = next;
   }
   return w;

@@ -19,6 +19,42 @@ function logPoisson(j: number, mean: number): number {
   return j === 0 ? -mean : -stirlingError(j) - deviance(j, mean) - 0.5 * Math.log(2 * Math.PI * j);
 }
 
+/** A sum of weights times tails, on a scale of its own until it is finished. */
+class ScaledSum {
+  private sum = 0;
+  private largest = 0;
+  private largestAt = 0;
+  private weightThere = 1;
+
+  /** Adds one term; returns what the weights must be divided by from here on. */
+  add(j: number, weight: number, tail: number): number {
+    const term = weight * tail;
+    this.sum += term;
+    if (term >= this.largest) {
+      this.largest = term;
+      this.largestAt = j;
+      this.weightThere = weight;
+    }
+    if (this.sum < BIG) return 1;
+    const scale = this.sum;
+    this.sum = 1;
+    this.largest /= scale;
+    this.weightThere /= scale;
+    return scale;
+  }
+
+  /** Whether a term is lost beside the sum; true too for one that is not a number. */
+  dwarfs(weight: number, tail: number): boolean {
+    return !(weight * tail >= 1e-18 * this.sum);
+  }
+
+  /** The sum on its true scale, fixed at the largest term, whose logarithm has the least rounding. */
+  value(family: StepFamily, mean: number): number {
+    const log = logPoisson(this.largestAt, mean) + family.logTerm(this.largestAt);
+    return Math.min(1, Math.exp(log) * (this.sum / this.weightThere));
+  }
+}
+
 /**
  * Mean of the lower tails of a family over a Poisson index, from positive terms: a downward sum.
  * @param family tails that fall as the index rises
@@ -29,24 +65,23 @@ function logPoisson(j: number, mean: number): number {
  */
 export function poissonLower(family: StepFamily, mean: number): number {
   const last = Math.ceil(mean + 10 * Math.sqrt(mean) + 40);
+  let sum = new ScaledSum();
   let tail = family.lowerOverTerm(last);
   let weight = 1;
-  let sum = tail;
-  let log = logPoisson(last, mean) + family.logTerm(last);
+  weight /= sum.add(last, weight, tail);
   for (let j = last - 1; j >= 0; j--) {
     const ratio = family.ratio(j);
     tail = 1 + tail * ratio;
-    weight *= (j + 1) / (mean * ratio);
-    const term = weight * tail;
-    sum += term;
-    if (j < mean && term < 1e-18 * sum) break;
-    if (sum > BIG) {
-      sum /= BIG;
-      weight /= BIG;
-      log += Math.log(BIG);
+    weight *= (j + 1) / mean / ratio;
+    if (weight === Infinity) {
+      // All terms so far are lost beside this one.
+      sum = new ScaledSum();
+      weight = 1;
     }
+    if (j < mean && sum.dwarfs(weight, tail)) break;
+    weight /= sum.add(j, weight, tail);
   }
-  return Math.min(1, Math.exp(log + Math.log(sum)));
+  return sum.value(family, mean);
 }
 
 /**
@@ -59,26 +94,21 @@ export function poissonLower(family: StepFamily, mean: number): number {
  */
 export function poissonUpper(family: StepFamily, mean: number): number {
   const first = Math.max(0, Math.floor(mean - 10 * Math.sqrt(mean)));
+  const sum = new ScaledSum();
   let tail = family.upperOverTerm(first);
   let weight = 1;
-  let sum = tail;
-  let log = logPoisson(first, mean) + family.logTerm(first);
   let previous = tail;
+  weight /= sum.add(first, weight, tail);
   for (let j = first; ; j++) {
     const ratio = family.ratio(j);
     tail = (tail + 1) / ratio;
     weight *= (mean * ratio) / (j + 1);
-    const term = weight * tail;
-    sum += term;
-    // Written so that a term that is not a number ends the sum too.
-    if (j > mean && !(term >= previous) && !(term >= 1e-18 * sum)) break;
-    previous = term;
-    if (sum > BIG) {
-      sum /= BIG;
-      weight /= BIG;
-      previous /= BIG;
-      log += Math.log(BIG);
-    }
+    const falling = !(weight * tail >= previous);
+    if (j > mean && falling && sum.dwarfs(weight, tail)) break;
+    previous = weight * tail;
+    const scale = sum.add(j + 1, weight, tail);
+    weight /= scale;
+    previous /= scale;
   }
-  return Math.min(1, Math.exp(log + Math.log(sum)));
+  return sum.value(family, mean);
 }

@@ -88,6 +88,17 @@ export function lgamma(x: number): number {
   return Math.log(Math.PI) - Math.log(sine) - Math.log(-x) - logGammaPositive(-x);
 }
 
+/**
+ * Natural logarithm of gamma(1 + z), with full relative precision for a small z.
+ * @param z above -1
+ * @returns log gamma(1 + z)
+ * @source zeta series about 2 for |z| <= 0.5, else log gamma
+ * @checked by hand: -0.5772156649 z for a tiny z, 1e-15
+ */
+export function lgammaOnePlus(z: number): number {
+  return Math.abs(z) <= 0.5 ? logGammaAboutTwo(z) - Math.log1p(z) : logGammaPositive(1 + z);
+}
+
 /** psi at positive arguments away from its root. */
 function digammaPositive(x: number): number {
   let shift = 0;

@@ -20,7 +20,9 @@ function mixture(range: (w: number, k: number) => number, q: number, k: number, 
     const log = logDensity(w);
     return log < -745 ? 0 : Math.exp(log) * range(q * Math.exp(w), k);
   };
-  const step = 0.55 / (Math.sqrt(2 * (df + k)) + Math.min(q * Math.exp(start), 40) + 2);
+  // Both the spread of S and the bend of the range's tail set how fine the steps must be.
+  const bend = 2 + Math.min(q * Math.exp(start), 40);
+  const step = Math.min(0.12, 0.6 / Math.sqrt(2 * (df + k) + bend * bend));
   let sum = at(start);
   for (const direction of [-step, step]) {
     let previous = sum;
