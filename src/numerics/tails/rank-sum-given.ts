@@ -1,7 +1,23 @@
 import { hypergeometricMass } from './hypergeometric.ts';
 
-/** Distribution of U among the first a + b ranks, one entry for each a, cut at the limit; with ties the index is 2U. */
-type Stage = Map<number, Float64Array>;
+/**
+ * Distributions of U among the ranks met so far, one for each number a of them in the first sample, cut at a limit.
+ * With ties the index is 2U. One set of buffers serves all stages: it is walked from the largest a down.
+ */
+interface Stages {
+  readonly mass: readonly Float64Array[];
+  readonly n1: number;
+  readonly n2: number;
+  readonly limit: number;
+  /** Index of one whole pair: 1, or 2 with ties. */
+  readonly pair: number;
+}
+
+function emptyStages(n1: number, n2: number, limit: number, pair: number): Stages {
+  const mass = Array.from({ length: n1 + 1 }, (_, a) => new Float64Array(Math.min(limit, pair * a * n2) + 1));
+  mass[0]![0] = 1;
+  return { mass, n1, n2, limit, pair };
+}
 
 /** Sizes of the groups of tied ranks, lowest rank first. */
 function groupSizes(midranks: Float64Array): number[] {
@@ -16,26 +32,36 @@ function groupSizes(midranks: Float64Array): number[] {
   return sizes;
 }
 
-/** Adds weight * from, shifted, to into; sums beyond the end of into are beyond the limit. */
-function addShifted(into: Float64Array, from: Float64Array, shift: number, weight: number): void {
-  const end = Math.min(from.length, into.length - shift);
-  for (let s = 0; s < end; s++) into[s + shift]! += weight * from[s]!;
+/** Adds weight * from[0..last], shifted, to into. */
+function addShifted(into: Float64Array, from: Float64Array, last: number, shift: number, weight: number): void {
+  const end = Math.min(last, into.length - 1 - shift);
+  for (let s = 0; s <= end; s++) into[s + shift]! += weight * from[s]!;
 }
 
-/** The stage after one more rank without a tie. */
-function withRank(stage: Stage, before: number, n1: number, n2: number, limit: number): Stage {
-  const next: Stage = new Map();
-  const after = before + 1;
-  for (let a = Math.max(0, after - n2); a <= Math.min(n1, after); a++) {
-    const b = after - a;
-    const into = new Float64Array(Math.min(limit, a * b) + 1);
-    const same = stage.get(a);
-    if (same !== undefined && b > 0) addShifted(into, same, 0, b / after);
-    const fewer = stage.get(a - 1);
-    if (fewer !== undefined && b <= limit) addShifted(into, fewer, b, a / after);
-    next.set(a, into);
+/** P(c of a tied group of `size` are in the first sample | a of the `after` lowest are). */
+function shareOf(c: number, after: number, size: number, a: number): number {
+  if (size === 1) return (c === 1 ? a : after - a) / after;
+  return hypergeometricMass(c, after, size, a);
+}
+
+/** Takes one more group of tied ranks in, a single rank being a group of one. */
+function takeIn(stages: Stages, before: number, size: number): void {
+  const { mass, n1, n2, limit, pair } = stages;
+  const after = before + size;
+  for (let a = Math.min(n1, after); a >= Math.max(0, after - n2); a--) {
+    const into = mass[a]!;
+    if (a <= before) {
+      const weight = shareOf(0, after, size, a);
+      for (let s = Math.min(limit, pair * a * (before - a)); s >= 0; s--) into[s]! *= weight;
+    }
+    for (let c = 1; c <= Math.min(a, size); c++) {
+      // c of the group lie above all b earlier scores of the other sample and tie with the rest of their group.
+      const b = before - (a - c);
+      if (b < 0 || b > n2) continue;
+      const shift = pair * c * b + 0.5 * pair * c * (size - c);
+      addShifted(into, mass[a - c]!, Math.min(limit, pair * (a - c) * b), shift, shareOf(c, after, size, a));
+    }
   }
-  return next;
 }
 
 /**
@@ -48,41 +74,20 @@ function withRank(stage: Stage, before: number, n1: number, n2: number, limit: n
  * @checked agrees with exact integer counts, 1e-13
  */
 export function latticeMass(n1: number, n2: number, limit: number): Float64Array {
-  let stage: Stage = new Map([[0, Float64Array.of(1)]]);
-  for (let before = 0; before < n1 + n2; before++) stage = withRank(stage, before, n1, n2, limit);
-  const mass = new Float64Array(limit + 1);
-  mass.set(stage.get(n1)!);
-  return mass;
-}
-
-/** The stage after one more group of tied ranks. */
-function withGroup(stage: Stage, before: number, size: number, n1: number, n2: number, limit: number): Stage {
-  const next: Stage = new Map();
-  const after = before + size;
-  for (let a = Math.max(0, after - n2); a <= Math.min(n1, after); a++) {
-    const into = new Float64Array(Math.min(limit, 2 * a * (after - a)) + 1);
-    for (let c = 0; c <= Math.min(a, size); c++) {
-      const from = stage.get(a - c);
-      if (from === undefined) continue;
-      // c of the group lie above all b earlier scores of the other sample and tie with the rest of their group.
-      const b = before - (a - c);
-      const shift = 2 * c * b + c * (size - c);
-      if (shift <= limit) addShifted(into, from, shift, hypergeometricMass(c, after, size, a));
-    }
-    next.set(a, into);
-  }
-  return next;
+  const stages = emptyStages(n1, n2, limit, 1);
+  for (let before = 0; before < n1 + n2; before++) takeIn(stages, before, 1);
+  return stages.mass[n1]!.slice(0, limit + 1);
 }
 
 /** P(U = u) on the index 2U, from 0 to the limit. */
 function tiedMass(sizes: readonly number[], n1: number, n2: number, limit: number): Float64Array {
-  let stage: Stage = new Map([[0, Float64Array.of(1)]]);
+  const stages = emptyStages(n1, n2, limit, 2);
   let before = 0;
   for (const size of sizes) {
-    stage = withGroup(stage, before, size, n1, n2, limit);
+    takeIn(stages, before, size);
     before += size;
   }
-  return stage.get(n1)!;
+  return stages.mass[n1]!;
 }
 
 function sumTo(mass: Float64Array, last: number): number {
