@@ -1,5 +1,6 @@
 /** p and limits from bootstrap values: percentile, BCa, bootstrap-t. */
 import { type Alternative, type Limits, limits, outside } from './inference.ts';
+import { selectKth } from './selection.ts';
 import { normalLower, normalQuantile } from './tails/normal.ts';
 
 /** p and interval; null with a reason where they do not exist. */
@@ -35,12 +36,13 @@ function directed(lower: number, upper: number, alternative: Alternative): numbe
   return alternative === 'less' ? upper : Math.min(1, 2 * Math.min(lower, upper));
 }
 
-function pick(sortedValues: Float64Array, below: number, above: number, alternative: Alternative): Limits | null {
-  const B = sortedValues.length;
+function pick(values: Float64Array, below: number, above: number, alternative: Alternative): Limits | null {
+  const B = values.length;
   const low = alternative === 'less' ? 1 : ranksOutside(below, B);
   const high = alternative === 'greater' ? 1 : ranksOutside(above, B);
   if (low < 1 || high < 1) return null;
-  return limits(sortedValues[low - 1] as number, sortedValues[B - high] as number, alternative);
+  const copy = values.slice();
+  return limits(selectKth(copy, low), selectKth(copy, B - high + 1), alternative);
 }
 
 /**
@@ -65,7 +67,7 @@ export function percentileInference(
 ): BootstrapInference {
   const { lower, upper } = tailShare(values, nullValue, grain);
   const tail = outside(level, alternative);
-  const interval = pick(values.slice().sort(), tail, tail, alternative);
+  const interval = pick(values, tail, tail, alternative);
   const p = directed(lower, upper, alternative);
   return interval === null ? { p, interval, reason: tooFew } : { p, interval };
 }
@@ -131,7 +133,7 @@ export function bcaInference(
   const tail = outside(level, alternative);
   const moved = (z: number) => z0 + pulled(z0 + z, -a);
   const z = normalQuantile(tail);
-  const interval = pick(values.slice().sort(), normalLower(moved(z)), normalLower(-moved(-z)), alternative);
+  const interval = pick(values, normalLower(moved(z)), normalLower(-moved(-z)), alternative);
   // The level at which a limit meets the null value; never below what B values can tell.
   const least = 1 / (B + 1);
   const met = (share: number, sign: number) => {
@@ -172,11 +174,11 @@ export function bootstrapTInference(
   const B = ts.length;
   const t = (estimate - nullValue) / se;
   if (alternative === 'two-sided' && form === 'symmetric') {
-    const sizes = ts.map(Math.abs).sort();
+    const sizes = ts.map(Math.abs);
     let beyond = 0;
     for (const size of sizes) if (size >= Math.abs(t)) beyond++;
     const rank = Math.ceil(level * (B + 1) - 1e-9);
-    const reach = rank > B ? Infinity : (sizes[rank - 1] as number) * se;
+    const reach = rank > B ? Infinity : selectKth(sizes, rank) * se;
     return finite((beyond + 1) / (B + 1), [estimate - reach, estimate + reach], rank > B);
   }
   let atMost = 0;
@@ -188,9 +190,9 @@ export function bootstrapTInference(
   const p = directed((atLeast + 1) / (B + 1), (atMost + 1) / (B + 1), alternative);
   const rank = ranksOutside(outside(level, alternative), B);
   if (rank < 1) return { p, interval: null, reason: tooFew };
-  const s = ts.slice().sort();
-  const low = estimate - (s[B - rank] as number) * se;
-  return finite(p, limits(low, estimate - (s[rank - 1] as number) * se, alternative), false);
+  const copy = ts.slice();
+  const low = estimate - selectKth(copy, B - rank + 1) * se;
+  return finite(p, limits(low, estimate - selectKth(copy, rank) * se, alternative), false);
 }
 
 function finite(p: number, interval: Limits, few: boolean): BootstrapInference {

@@ -88,7 +88,10 @@ export function exactBootstrap(
   let mean = 0;
   for (let i = 0; i < distinct; i++) mean += (probabilities[i] as number) * (values[i] as number);
   let squares = 0;
-  for (let i = 0; i < distinct; i++) squares += (probabilities[i] as number) * ((values[i] as number) - mean) ** 2;
+  for (let i = 0; i < distinct; i++) {
+    const gap = (values[i] as number) - mean;
+    squares += (probabilities[i] as number) * gap * gap;
+  }
   const order = Uint32Array.from(values, (_, i) => i).sort((i, j) => (values[i] as number) - (values[j] as number));
   const limit = (share: number) => quantileOf(values, probabilities, order, share);
   return { distinct, mean, se: Math.sqrt(squares), interval: [limit((1 - level) / 2), limit((1 + level) / 2)] };

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { sorted } from '../../src/numerics/order.ts';
-import { pairDifference, pairDistance, walshAverage } from '../../src/numerics/selection.ts';
+import { pairDifference, pairDistance, selectKth, walshAverage } from '../../src/numerics/selection.ts';
 import { scores, uneven } from './samples.ts';
 
 function pairs(n: number, from: (i: number) => number, value: (i: number, j: number) => number): Float64Array {
@@ -43,6 +43,19 @@ describe('selection from pairwise sums', () => {
     const t = sorted(uneven(70).map((v) => v * 1.1));
     const all = Float64Array.from([...s].flatMap((a) => [...t].map((b) => a - b))).sort();
     for (const k of [1, 2, 100, 3150, 6299, 6300]) expect(pairDifference(s, t, k)).toBe(all[k - 1]);
+  });
+  it('agrees with sorting: k-th of a list, infinite and tied values included (exactly)', () => {
+    for (const list of [
+      uneven(1),
+      uneven(2),
+      uneven(57),
+      scores(3, Infinity, -Infinity, 3, 3, 0),
+      uneven(500).sort(),
+    ]) {
+      const s = sorted(list);
+      for (let k = 1; k <= list.length; k++) expect(selectKth(list.slice(), k)).toBe(s[k - 1]);
+    }
+    expect(() => selectKth(scores(), 1)).toThrow('*k* must be');
   });
   it('invariance: adding a power of two moves averages and leaves distances', () => {
     const s = sorted(uneven(40));

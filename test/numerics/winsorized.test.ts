@@ -1,11 +1,14 @@
 import { describe, expect, it } from 'vitest';
 import { oneSampleT } from '../../src/numerics/one-sample-t.ts';
+import { sorted } from '../../src/numerics/order.ts';
+import { trimCount } from '../../src/numerics/scores.ts';
 import {
   winsorized,
   winsorizedCovariance,
   winsorizedMean,
   winsorizedMeanTest,
   winsorizedSd,
+  winsorizedSorted,
   winsorizedVariance,
 } from '../../src/numerics/winsorized.ts';
 import { close, darwin, drugOne, drugTwo, scores } from './samples.ts';
@@ -24,6 +27,18 @@ describe('winsorized', () => {
   it('agrees with SciPy 1.10 mstats.winsorize of Darwin, 20 % (rtol 1e-12)', () => {
     expect(close(winsorizedMean(darwin, 20), 26.866666666666667, 1e-12)).toBe(true);
     expect(close(winsorizedVariance(darwin, 20), 278.2666666666666, 1e-12)).toBe(true);
+  });
+  it('agrees with the plain functions: scores already sorted (rtol 1e-13)', () => {
+    for (const [x, trim] of [
+      [darwin, 20],
+      [drugOne, 0],
+      [drugTwo, 30],
+    ] as const) {
+      const own = winsorizedSorted(sorted(x), trimCount(x.length, trim));
+      expect(close(own.mean, winsorizedMean(x, trim), 1e-13)).toBe(true);
+      expect(close(own.squares / (x.length - 1), winsorizedVariance(x, trim), 1e-13)).toBe(true);
+    }
+    expect(() => winsorizedSorted(scores(1, 2), 1)).toThrow('*g* must leave');
   });
   it('theory: at 0 % the test is the one-sample t test', () => {
     const { g: _g, h: _h, ...own } = winsorizedMeanTest(darwin, { trim: 0, mu: 5, level: 0.9 });
