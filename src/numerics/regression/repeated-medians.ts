@@ -1,5 +1,6 @@
 import { median } from '../order.ts';
 import { requirePairs, requireScores } from '../scores.ts';
+import { select } from './select.ts';
 
 /** Line through the median over points of each point's median slope. */
 export interface RepeatedMedians {
@@ -25,16 +26,23 @@ export function repeatedMedians(x: Float64Array, y: Float64Array): RepeatedMedia
   requireScores(x, 0);
   requireScores(y, 0, 'y');
   if (x.every((value) => value === x[0])) return { slope: null, intercept: null, reason: 'x does not vary' };
-  const slope = median(Float64Array.from(x, (_, i) => median(slopesFrom(x, y, i))));
+  const slopes = new Float64Array(x.length);
+  const slope = medianInPlace(Float64Array.from(x, (_, i) => medianInPlace(slopesFrom(x, y, i, slopes))));
   return { slope, intercept: median(y.map((value, i) => value - slope * x[i]!)) };
 }
 
-function slopesFrom(x: Float64Array, y: Float64Array, i: number): Float64Array {
-  const slopes = new Float64Array(x.length);
+/** Slopes from point i to the points that differ in x, in the front of `slopes`. */
+function slopesFrom(x: Float64Array, y: Float64Array, i: number, slopes: Float64Array): Float64Array {
   let count = 0;
   for (let j = 0; j < x.length; j++) {
     const run = x[j]! - x[i]!;
     if (run !== 0) slopes[count++] = (y[j]! - y[i]!) / run;
   }
   return slopes.subarray(0, count);
+}
+
+function medianInPlace(values: Float64Array): number {
+  const middle = (values.length - 1) >> 1;
+  const low = select(values, middle);
+  return values.length % 2 === 1 ? low : low + (select(values, middle + 1, middle + 1) - low) / 2;
 }

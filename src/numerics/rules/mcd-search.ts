@@ -162,8 +162,17 @@ function drawnStart(data: Matrix, h: number, below: (bound: number) => number): 
   return null;
 }
 
-/** Take the h nearest rows and fit again, until the determinant no longer shrinks; null = a subset without spread. */
-function concentrate(data: Matrix, h: number, start: SubsetFit, most: number): SubsetFit | null {
+/**
+ * Takes the h rows nearest to a fit and fits again, until the determinant no longer shrinks.
+ * @param data n by p
+ * @param h rows in the subset, more than p, at most n
+ * @param start middle and covariance to begin from; of h rows it must be a fit of *data* itself
+ * @param most largest number of steps
+ * @returns the fit of the last subset; null for a subset without spread in some direction
+ * @source Rousseeuw & Van Driessen 1999, Technometrics 41, 212-223: concentration steps
+ * @checked by hand
+ */
+export function concentrate(data: Matrix, h: number, start: SubsetFit, most: number): SubsetFit | null {
   let fit = start;
   for (let step = 0; step < most; step++) {
     const next = fitRows(data, nearest(distancesFrom(data, fit), h));

@@ -2,7 +2,7 @@ import { type Matrix, matrixFromColumns } from '../matrix.ts';
 import { rng } from '../rng.ts';
 import { chiSquareLower, chiSquareQuantile } from '../tails/chi-square.ts';
 import { DEPENDENT, requireColumns, requireQuantile } from './mahalanobis.ts';
-import { distancesFrom, fitRows, type SubsetFit, smallestDeterminant } from './mcd-search.ts';
+import { concentrate, distancesFrom, fitRows, type SubsetFit, smallestDeterminant } from './mcd-search.ts';
 
 /** Robust distances: middle and covariance from the rows that lie closest together. */
 export interface McdDistances {
@@ -77,6 +77,41 @@ export function mcdDistances(
       ) === null;
     return noMcd(n, h, whole ? DEPENDENT : `${h} rows have no spread in some direction`);
   }
+  return reweighted(data, raw, h, quantile);
+}
+
+/**
+ * The same for a resample, where a search from many starts for each of thousands of resamples would take minutes: the
+ * subset is concentrated from the fit of the whole data and from all rows of the resample only.
+ * @param columns p vectors of n scores each
+ * @param whole fit of the whole data's subset
+ * @param options alpha and quantile as for the whole data (.75 and .975)
+ * @returns as mcdDistances; null with a reason where neither start leads to a subset with spread in every direction
+ * @throws RangeError when there is no column, lengths differ, a score is not finite or an option is out of range
+ * @source Rousseeuw & Van Driessen 1999: concentration steps; common practice: starts of a resample at the whole data's fit
+ * @checked agrees with mcdDistances on resamples of a clean cloud with a far cluster
+ */
+export function mcdOfResample(
+  columns: readonly Float64Array[],
+  whole: SubsetFit,
+  options: { readonly alpha?: number; readonly quantile?: number } = {},
+): McdDistances {
+  const { alpha = 0.75, quantile = 0.975 } = options;
+  const n = requireColumns(columns);
+  requireQuantile(quantile);
+  const h = mcdSubsetSize(n, columns.length, alpha);
+  const data = matrixFromColumns(columns);
+  const all = fitRows(
+    data,
+    Int32Array.from({ length: n }, (_, i) => i),
+  );
+  if (all === null) return noMcd(n, h, DEPENDENT);
+  if (h === n) return reweighted(data, all, h, quantile);
+  const starts = [{ ...whole, indices: new Int32Array(0) }, all];
+  const fits = starts.map((start) => concentrate(data, h, start, 100)).filter((fit) => fit !== null);
+  const [first, second] = fits;
+  if (first === undefined) return noMcd(n, h, `${h} rows have no spread in some direction`);
+  const raw = second !== undefined && second.logDeterminant < first.logDeterminant ? second : first;
   return reweighted(data, raw, h, quantile);
 }
 

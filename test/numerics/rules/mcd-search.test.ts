@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { matrix, matrixFromColumns } from '../../../src/numerics/matrix.ts';
 import { rng } from '../../../src/numerics/rng.ts';
-import { distancesFrom, fitRows, smallestDeterminant } from '../../../src/numerics/rules/mcd-search.ts';
+import { concentrate, distancesFrom, fitRows, smallestDeterminant } from '../../../src/numerics/rules/mcd-search.ts';
 
 const below = (seed: number) => {
   const stream = rng(seed);
@@ -57,4 +57,14 @@ test('refuses a bound that the draw refuses', () => {
     throw new RangeError('*n* must be an integer');
   };
   expect(() => smallestDeterminant(data, 32, broken)).toThrow(/\*n\* must be an integer/);
+});
+
+test('by hand: from the middle of 0, 1, 2 the three nearest of 0, 1, 2, 10, 20 are themselves', () => {
+  const data = matrix(5, 1, [0, 1, 2, 10, 20]);
+  const start = fitRows(data, Int32Array.of(0, 1, 2));
+  if (start === null) throw new Error('the rows spread');
+  expect([...(concentrate(data, 3, start, 10)?.indices ?? [])]).toEqual([0, 1, 2]);
+  const elsewhere = fitRows(data, Int32Array.of(1, 3));
+  if (elsewhere === null) throw new Error('the rows spread');
+  expect([...(concentrate(data, 3, elsewhere, 10)?.indices ?? [])]).toEqual([0, 1, 2]);
 });

@@ -1,6 +1,8 @@
 import { expect, test } from 'vitest';
+import { matrixFromColumns } from '../../../src/numerics/matrix.ts';
 import { rng } from '../../../src/numerics/rng.ts';
-import { mcdDistances, mcdSubsetSize } from '../../../src/numerics/rules/mcd.ts';
+import { mcdDistances, mcdOfResample, mcdSubsetSize } from '../../../src/numerics/rules/mcd.ts';
+import { fitRows } from '../../../src/numerics/rules/mcd-search.ts';
 
 const stream = rng(5);
 const cloud = [0, 1].map(() => Float64Array.from({ length: 24 }, () => stream.uniform() + stream.uniform()));
@@ -50,4 +52,25 @@ test('degenerate: few rows, dependent columns and rows on a line give a reason',
 test('refuses an alpha below .5 and a quantile of 0', () => {
   expect(() => mcdDistances([x, y], { alpha: 0.4 })).toThrow(/\*alpha\* must be between .5 and 1/);
   expect(() => mcdDistances([x, y], { quantile: 0 })).toThrow(/\*quantile\* must be/);
+});
+
+test('agrees with the full search: the marks of 6 resamples of a cloud with a far cluster', () => {
+  const whole = fitRows(matrixFromColumns([x, y]), mcdDistances([x, y]).subset as Int32Array);
+  if (whole === null) throw new Error('the subset spreads');
+  let same = 0;
+  for (let seed = 1; seed <= 6; seed++) {
+    const draw = rng(seed);
+    const rows = Array.from({ length: 28 }, () => draw.below(28));
+    const columns = [x, y].map((column) => Float64Array.from(rows, (i) => column[i] as number));
+    const [quick, full] = [mcdOfResample(columns, whole), mcdDistances(columns)];
+    if (quick.flags.join() === full.flags.join()) same++;
+  }
+  expect(same).toBe(6);
+});
+
+test('degenerate: a resample without spread gives a reason', () => {
+  const whole = fitRows(matrixFromColumns([x, y]), mcdDistances([x, y]).subset as Int32Array);
+  if (whole === null) throw new Error('the subset spreads');
+  const flat = new Float64Array(28).fill(1);
+  expect(mcdOfResample([flat, flat], whole).reason).toBe('a column does not vary or is a combination of the others');
 });
