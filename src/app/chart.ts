@@ -5,6 +5,7 @@ import { chartConfig, withColours } from './chart-config.ts';
 import { download } from './download.ts';
 import { LightElement } from './light-element.ts';
 import { type Colours, coloursOf } from './theme.ts';
+import { WhenSeen } from './when-seen.ts';
 
 type Rows = readonly object[];
 
@@ -30,6 +31,7 @@ export class ChartView extends LightElement {
   #rows: { readonly [name: string]: Rows } = {};
   /** Figures are made one after another: a newer one waits for the one being made. */
   #turn: Promise<void> = Promise.resolve();
+  readonly #seen = new WhenSeen(() => this.#next());
 
   constructor() {
     super();
@@ -41,12 +43,14 @@ export class ChartView extends LightElement {
   override connectedCallback(): void {
     super.connectedCallback();
     window.addEventListener('sf-theme', this.#again);
+    this.#seen.watch(this);
     if (this.hasUpdated) this.#again();
   }
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     window.removeEventListener('sf-theme', this.#again);
+    this.#seen.stop();
     this.#shown?.finalize();
     this.#shown = null;
     this.#key = '';
@@ -63,12 +67,12 @@ export class ChartView extends LightElement {
   }
 
   protected override updated(_changed: PropertyValues): void {
-    this.#next();
+    this.#seen.ask();
   }
 
   #again = (): void => {
     this.#key = '';
-    this.#next();
+    this.#seen.ask();
   };
 
   #next(): void {

@@ -77,7 +77,7 @@ async function start(): Promise<void> {
       save: { state: 'saved' },
       pointed: null,
       incoming: null,
-      foot: window.innerWidth >= 700,
+      foot: window.innerWidth >= 700 && window.innerHeight >= 560,
     },
   );
   const shown = page;

@@ -14,6 +14,7 @@ import {
 } from './points-geometry.ts';
 import { type PointScale, type PointStrip, pointScale } from './points-scale.ts';
 import { coloursOf } from './theme.ts';
+import { WhenSeen } from './when-seen.ts';
 
 /**
  * A strip of raw scores on a plain canvas: kept ones as translucent dots, those set aside as hollow circles. The limits
@@ -25,7 +26,9 @@ export class PointsView extends LightElement {
   declare label: string;
   declare theme: string;
   #width = 0;
-  #drawn: { x: Float64Array; mark: Uint8Array; width: number; theme: string; low: number; high: number } | null = null;
+  /** What the points and the axis were drawn from. */
+  #drawn: { x: Float64Array; mark: Uint8Array; axis: string } | null = null;
+  readonly #seen = new WhenSeen(() => this.#draw());
   readonly #resized = new ResizeObserver(() => this.#measure());
 
   constructor() {
@@ -38,18 +41,20 @@ export class PointsView extends LightElement {
   override connectedCallback(): void {
     super.connectedCallback();
     this.#resized.observe(this);
+    this.#seen.watch(this);
     window.addEventListener('sf-theme', this.#themed);
   }
 
   override disconnectedCallback(): void {
     super.disconnectedCallback();
     this.#resized.disconnect();
+    this.#seen.stop();
     window.removeEventListener('sf-theme', this.#themed);
   }
 
   protected override render(): TemplateResult {
     return html`<div class="strip-of-points" role="img" tabindex="0" aria-label=${this.label}>
-        <canvas class="limits"></canvas><canvas class="dots"></canvas>
+        <canvas class="limits"></canvas><canvas class="dots"></canvas><canvas class="axis"></canvas>
       </div>
       <div class="words keep">
         <button type="button" class="word" aria-label="save this figure as SVG" @click=${this.#saveSvg}>SVG</button>
@@ -58,7 +63,7 @@ export class PointsView extends LightElement {
   }
 
   protected override updated(_changed: PropertyValues): void {
-    this.#draw();
+    this.#seen.ask();
   }
 
   #themed = (): void => {
@@ -81,12 +86,13 @@ export class PointsView extends LightElement {
     const colours = coloursOf();
     drawLimits(this.#canvas('.limits', box), strip, scale, box, colours);
     const { x, mark } = strip;
+    const axis = `${width} ${this.theme} ${scale.log} ${scale.low} ${scale.high} ${strip.axis}`;
     const was = this.#drawn;
-    const { low, high } = scale;
-    const same = was?.x === x && was.mark === mark && was.width === width && was.low === low && was.high === high;
-    if (same && was?.theme === this.theme) return;
-    drawPoints(this.#canvas('.dots', box), strip, scale, box, colours);
-    this.#drawn = { x, mark, width, theme: this.theme, low, high };
+    if (was?.axis !== axis) drawAxis(this.#canvas('.axis', box), scale, box, colours);
+    if (was?.axis !== axis || was.x !== x || was.mark !== mark) {
+      drawPoints(this.#canvas('.dots', box), strip, scale, box, colours);
+    }
+    this.#drawn = { x, mark, axis };
   }
 
   #canvas(which: string, box: StripBox): CanvasRenderingContext2D | null {
@@ -115,6 +121,7 @@ export class PointsView extends LightElement {
     }
     drawLimits(context, strip, scale, box, colours);
     drawPoints(context, strip, scale, box, colours);
+    drawAxis(context, scale, box, colours);
     canvas.toBlob((blob) => blob !== null && download(blob, 'scores.png'));
   }
 }
@@ -174,10 +181,15 @@ function drawPoints(
     context.arc(at, y, 2.8, 0, 2 * Math.PI);
   }
   context.stroke();
-  drawAxis(context, scale, box, colours);
 }
 
-function drawAxis(context: CanvasRenderingContext2D, scale: PointScale, box: StripBox, colours: StripColours): void {
+function drawAxis(
+  context: CanvasRenderingContext2D | null,
+  scale: PointScale,
+  box: StripBox,
+  colours: StripColours,
+): void {
+  if (context === null) return;
   context.fillStyle = colours.axis;
   context.fillRect(box.left, box.bottom, box.right - box.left, 1);
   context.textAlign = 'center';
