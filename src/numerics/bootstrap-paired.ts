@@ -16,7 +16,7 @@ import {
   reader,
   valueSorted,
 } from './bootstrap-statistic.ts';
-import { walkWinsorized, winsorWalk } from './resample.ts';
+import { walkWinsorized, winsorWalk } from './resample-walks.ts';
 import { requirePairs, requireScores } from './scores.ts';
 
 /** One margin of the pairs: its scores sorted, and which pair each belongs to. */

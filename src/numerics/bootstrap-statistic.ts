@@ -1,7 +1,7 @@
 /** The statistics that can be resampled, each read off the counts of a resample. */
 import { modifiedOneStepSorted, oneStepSorted } from './m-estimator.ts';
 import { MAD_CONSTANT, madSorted, medianSorted, sorted } from './order.ts';
-import { walkExpand, walkMedian, walkTrimmedSum, walkWinsorized, winsorWalk } from './resample.ts';
+import { walkExpand, walkMedian, walkTrimmedSum, walkWinsorized, winsorWalk } from './resample-walks.ts';
 import { trimCount } from './scores.ts';
 import { medianStandardErrorSorted } from './se-median.ts';
 

@@ -1,7 +1,8 @@
 import { percentileInference } from '../bootstrap-limits.ts';
 import { prepare, type Resampled } from '../bootstrap-statistic.ts';
 import type { Limits, TestOptions } from '../inference.ts';
-import { resample, type WinsorWalk, walkWinsorized, winsorWalk } from '../resample.ts';
+import { resample } from '../resample.ts';
+import { type WinsorWalk, walkWinsorized, winsorWalk } from '../resample-walks.ts';
 import { requireScores } from '../scores.ts';
 import { akpRobustD, akpRobustDPaired, type RobustD, winsorizedNormalSd } from './akp-robust-d.ts';
 
