@@ -1,8 +1,9 @@
-import { type ComparisonSpec, type Result, withholdsTextbook } from '../../src/analysis/compare.ts';
+import type { ComparisonSpec, Result } from '../../src/analysis/compare.ts';
 import { estimatorOf } from '../../src/analysis/estimators.ts';
 import { findingRecord } from '../../src/analysis/finding.ts';
 import { takeSamples } from '../../src/analysis/samples.ts';
 import type { Scores } from '../../src/analysis/score.ts';
+import { withholdsTextbook } from '../../src/analysis/withhold.ts';
 import { type Context, defineKind, numberOf, Refusal } from '../kind.ts';
 import { comparisonNotes } from './notes.ts';
 import { type ComparisonSettings, comparisonSentence } from './sentence.ts';

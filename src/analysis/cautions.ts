@@ -79,11 +79,23 @@ export const CAUTIONS = {
       `The rule takes more from one condition than from another: ${text(f, 'counts')}. A difference of more than 5 points (common practice) can favour a condition.`,
     source: 'common practice; methods 3.9, R16',
   },
+  R17: {
+    action: 'warn',
+    sentence: (f) =>
+      `A bootstrap only knows the scores it draws from: with fewer than 10 its intervals are unsteady, and BCa is given from 20 under each condition on. Here: ${text(f, 'counts')}.`,
+    source: 'methods 3.2 and 3.9, R17; Efron 1987',
+  },
   R18: {
     action: 'warn',
     sentence: (f) =>
-      `The groups differ in size and in spread (SD ${text(f, 'ratio')} to 1, the larger in the ${text(f, 'where')} group): Student's test would be ${text(f, 'bias')}. Read Welch's row beside it.`,
+      `The groups differ in size and in spread (SD ${text(f, 'ratio')} to 1, the larger in the ${text(f, 'where')} ${text(f, 'groups')}): ${text(f, 'test')} would be ${text(f, 'bias')}. Read the ${text(f, 'beside')} beside it.`,
     source: 'Scheffe 1959, 10.4; exact levels in methods 5.1',
+  },
+  R19: {
+    action: 'say',
+    sentence: (f) =>
+      `Whether differences are the same in every group depends on the scale: equal differences in ${text(f, 'unit')} are unequal proportions. An interaction of this kind can vanish, or appear, under a transformation.`,
+    source: 'Loftus 1978; methods 3.9, R19',
   },
   R20: {
     action: 'say',
@@ -107,6 +119,25 @@ export const CAUTIONS = {
     sentence: (f) =>
       `With ${text(f, 'n')} the smallest p a rank or sign test can reach is ${text(f, 'smallest')}, above alpha ${text(f, 'alpha')}: it cannot come out significant, whatever the scores.`,
     source: 'methods 3.9, R25',
+  },
+  EPS: {
+    action: 'warn',
+    sentence: (f) =>
+      `The differences between conditions do not all vary alike (\u03b5 = ${text(f, 'epsilon')}; 1 would be sphericity): with uncorrected df the test can exceed its level (.09 instead of .05 at \u03b5 = .50 with 20 participants, simulated). Read the rows with corrected df.`,
+    source: 'Box 1954; simulated levels in methods 5.7',
+  },
+  WJN: {
+    action: 'warn',
+    sentence: (f) =>
+      `The smallest group keeps ${text(f, 'n')} scores for the covariances of ${text(f, 'columns')} conditions: below three for each comparison within participants (common practice) the Welch\u2013James row can exceed its level.`,
+    source: 'Keselman, Algina, Lix, Wilcox & Deering 2008, from memory; methods 3.3',
+  },
+  R2P: {
+    action: 'say',
+    sentence: (f) =>
+      `The rule sees the condition. The planned row's p re-applies the rules in each of ${text(f, 'resamples')} relabellings, and its interval in each of ${text(f, 'resamples')} resamples of participants${text(f, 'lost')}. Relabelling takes scores to be interchangeable if nothing is going on.`,
+    source:
+      'methods 0.3 and 5.4: level .043 to .060 (relabelling) and .031 to .056 (resampling) where the textbook gave up to .20, simulated',
   },
   R8B: {
     action: 'say',

@@ -1,13 +1,18 @@
+import type { Asked } from './asked.ts';
 import type { Design } from './design.ts';
 import { ESTIMATORS, type Estimator, type RowContext } from './estimators.ts';
 import type { Finding } from './finding.ts';
-import { type Rule, readsCondition } from './rules.ts';
-import type { Samples } from './samples.ts';
+import type { Level } from './levels.ts';
+import type { Pairs } from './pairs.ts';
+import type { SampleScope, Samples } from './samples.ts';
 import type { Scores } from './score.ts';
+import { withheldFinding } from './withhold.ts';
 
 export interface ComparisonSpec {
   readonly factor: string;
-  /** The estimate is first minus second. */
+  /** What is asked, where it is not this pair of levels. */
+  readonly effect?: Asked;
+  /** The two levels, or the two sides in words. The estimate is first minus second. */
   readonly first: string;
   readonly second: string;
   /** Id of the planned estimator (analysis/estimators.ts). */
@@ -26,12 +31,16 @@ export interface Result {
   /** Design, rules and score stand inside `scores`. */
   readonly scores: Scores;
   readonly comparison: ComparisonSpec;
-  readonly scope: 'within' | 'between';
+  readonly scope: SampleScope | 'omnibus';
   /** Every fitting row, in the order of analysis/estimators.ts; the planned one is `findings[planned]`. */
   readonly findings: readonly Finding[];
   readonly planned: number;
   /** Participants with a score who could not enter, and why. */
   readonly left: readonly { readonly participant: string; readonly why: string }[];
+  /** A question about several levels only: each of them, for the picture. */
+  readonly levels?: readonly Level[];
+  /** A question about several levels only: all pairs, where they were asked for. */
+  readonly pairs?: Pairs | null;
 }
 
 /** What a comparison job needs: two samples and how they are compared. No design, so that little is cloned. */
@@ -70,35 +79,10 @@ export function compareRow(estimator: Estimator, args: CompareArgs, trim = args.
     second: samples.second,
   };
   const finding = estimator.run(samples, context);
-  return args.withheld ? withhold(finding) : finding;
+  return args.withheld ? withheldFinding(finding) : finding;
 }
 
 /** The rows offered for a scope, in order. */
-export function fittingEstimators(scope: 'within' | 'between'): Estimator[] {
+export function fittingEstimators(scope: SampleScope): Estimator[] {
   return ESTIMATORS.filter((estimator) => estimator.scope === scope);
-}
-
-/** Whether the rules split the conditions under test, so that textbook p and interval are withheld (methods R2). */
-export function withholdsTextbook(rules: readonly Rule[], rows: Design['roles']['rows']): boolean {
-  return rules.some(
-    (rule) =>
-      rule.rule === 'extreme' &&
-      rule.cutoff !== null &&
-      readsCondition(rule) &&
-      (rule.scope === 'condition' || rows === 'one score'),
-  );
-}
-
-function withhold(finding: Finding): Finding {
-  return {
-    ...finding,
-    reason: 'p and interval withheld: an exclusion rule above looks at each condition separately',
-    se: null,
-    df: null,
-    statistic: null,
-    p: null,
-    interval: null,
-    effects: finding.effects.map((effect) => ({ ...effect, interval: null, reason: 'withheld with the interval' })),
-    cautions: [...finding.cautions, 'R2'],
-  };
 }

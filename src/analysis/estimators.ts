@@ -1,8 +1,13 @@
 import type { Design } from './design.ts';
 import type { Finding } from './finding.ts';
-import { BETWEEN_ROWS } from './rows-between.ts';
-import { WITHIN_ROWS } from './rows-within.ts';
-import type { Samples } from './samples.ts';
+import { BETWEEN_MEAN_ROWS } from './rows-between.ts';
+import { BETWEEN_RANK_ROWS } from './rows-between-ranks.ts';
+import { CONTRAST_ROWS } from './rows-contrast.ts';
+import { VALUE_ROWS } from './rows-one.ts';
+import { BETWEEN_RESAMPLED_ROWS, WITHIN_RESAMPLED_ROWS } from './rows-resampled.ts';
+import { WITHIN_MEAN_ROWS } from './rows-within.ts';
+import { WITHIN_RANK_ROWS } from './rows-within-ranks.ts';
+import type { SampleScope, Samples } from './samples.ts';
 
 /** What a row needs beside the samples. */
 export interface RowContext {
@@ -24,7 +29,7 @@ export interface Estimator {
   readonly id: string;
   /** The quantity as it stands in the sentence: "trimmed mean of differences". */
   readonly name: string;
-  readonly scope: 'within' | 'between';
+  readonly scope: SampleScope;
   /** Whether it has a trim. */
   readonly trims: boolean;
   /** Id of the row it becomes when nobody is trimmed. */
@@ -35,8 +40,17 @@ export interface Estimator {
   run(samples: Samples, context: RowContext): Finding;
 }
 
-/** THE LIST of rows, in the order shown; a new one is a line in one of the two files it is made from. */
-export const ESTIMATORS: readonly Estimator[] = [...WITHIN_ROWS, ...BETWEEN_ROWS];
+/** THE LIST of rows of two conditions, in the order shown; a new one is a line in one of the files it is made from. */
+export const ESTIMATORS: readonly Estimator[] = [
+  ...WITHIN_MEAN_ROWS,
+  ...WITHIN_RANK_ROWS,
+  ...WITHIN_RESAMPLED_ROWS,
+  ...BETWEEN_MEAN_ROWS,
+  ...BETWEEN_RANK_ROWS,
+  ...BETWEEN_RESAMPLED_ROWS,
+  ...CONTRAST_ROWS,
+  ...VALUE_ROWS,
+];
 
 /** The row of that id, or undefined. */
 export function estimatorOf(id: string): Estimator | undefined {

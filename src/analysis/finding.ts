@@ -46,7 +46,9 @@ export interface Finding {
   readonly reason?: string;
   readonly se: number | null;
   readonly df: number | null;
-  /** Name as the field writes it: "t", "V", "U", "W", "z". */
+  /** Denominator degrees of freedom of an F; absent or null for every other statistic. */
+  readonly df2?: number | null;
+  /** Name as the field writes it: "t", "V", "U", "W", "z", "F", "H". */
   readonly statistic: { readonly name: string; readonly value: number } | null;
   readonly p: number | null;
   /** How p was found: "t distribution", "exact conditional", "percentile bootstrap, B = 2,000". */
@@ -72,6 +74,7 @@ export function findingRecord(finding: Finding) {
     estimate: finding.estimate,
     se: finding.se,
     df: finding.df,
+    ...(finding.df2 === undefined || finding.df2 === null ? {} : { df2: finding.df2 }),
     statistic: finding.statistic ? [finding.statistic.name, finding.statistic.value] : null,
     p: finding.p,
     interval: finding.interval,

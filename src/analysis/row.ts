@@ -1,6 +1,6 @@
 /** How a row is put together: what every Finding of one estimator shares, and what a t test gives it. */
 import type { TTest } from '../numerics/inference.ts';
-import type { RowContext } from './estimators.ts';
+import type { Estimator, RowContext } from './estimators.ts';
 import type { ConditionCount, EffectSize, Finding } from './finding.ts';
 import type { Samples } from './samples.ts';
 
@@ -63,7 +63,7 @@ export function makeRow(samples: Samples, context: RowContext, words: RowWords, 
     level: context.level,
     alternative: context.alternative,
     effects: numbers.effects ?? [],
-    n: samples.scope === 'within' ? n1 : n1 + n2,
+    n: samples.scope === 'within' || samples.scope === 'value' ? n1 : n1 + n2,
     counts: counts(samples, h),
     cautions: [...(numbers.cautions ?? []), ...(few ? ['R22'] : [])],
     method: words.method,
@@ -85,14 +85,92 @@ export function fromT(test: TTest): RowNumbers {
 }
 
 function counts(samples: Samples, h: readonly [number, number]): ConditionCount[] {
-  return [
-    { condition: samples.first, n: samples.x.length, h: h[0] },
-    { condition: samples.second, n: samples.y.length, h: h[1] },
-  ];
+  const first = { condition: samples.first, n: samples.x.length, h: h[0] };
+  return samples.scope === 'value' ? [first] : [first, { condition: samples.second, n: samples.y.length, h: h[1] }];
 }
 
 /** A direction for a quantity that grows as the first condition shrinks. */
 export function turned(alternative: RowContext['alternative']): RowContext['alternative'] {
   if (alternative === 'two-sided') return alternative;
   return alternative === 'greater' ? 'less' : 'greater';
+}
+
+/** Options of a bootstrap row. */
+export function bootOptions(context: RowContext) {
+  return { B: context.resamples, seed: context.seed, level: context.level, alternative: context.alternative };
+}
+
+/** The numbers of a percentile bootstrap as a row has them. */
+export function fromBootstrap(
+  test: {
+    estimate: number | null;
+    se: number | null;
+    p: number | null;
+    interval: Finding['interval'];
+    reason?: string;
+  },
+  context: RowContext,
+) {
+  return {
+    estimate: test.estimate,
+    reason: test.reason,
+    se: test.se,
+    p: test.p,
+    pHow: `percentile bootstrap, B = ${context.resamples}`,
+    interval: test.interval,
+  };
+}
+
+/** How a rank test's p was found, in words. */
+export function pMethod(method: string): string {
+  return method === 'asymptotic' ? 'normal approximation with tie and continuity correction' : 'exact conditional';
+}
+
+/** R17: with fewer than 10 scores a bootstrap is unsteady. */
+export function fewForBootstrap(...samples: readonly Float64Array[]): string[] {
+  return samples.some((scores) => scores.length < 10) ? ['R17'] : [];
+}
+
+/** R3: more than a quarter trimmed at each end. */
+export function trimCautions(context: RowContext): string[] {
+  return context.trim > 25 ? ['R3'] : [];
+}
+
+/** R25: with n signs to flip the smallest p is above alpha. */
+export function smallestSignP(n: number, context: RowContext): string[] {
+  const smallest = (context.alternative === 'two-sided' ? 2 : 1) / 2 ** n;
+  return smallest > 1 - context.level ? ['R25'] : [];
+}
+
+/** R25: with two groups to split the smallest p is above alpha. */
+export function smallestSplitP({ x, y }: Samples, context: RowContext): string[] {
+  let splits = 1;
+  for (let i = 1; i <= x.length && splits < 1e6; i++) splits = (splits * (y.length + i)) / i;
+  return (context.alternative === 'two-sided' ? 2 : 1) / splits > 1 - context.level ? ['R25'] : [];
+}
+
+/** The row where no participant has a score under both conditions. */
+export function nobody(
+  samples: Samples,
+  context: RowContext,
+  estimator: string,
+  label: string,
+  group: string,
+): Finding {
+  return makeRow(
+    samples,
+    context,
+    { estimator, label, quantity: '', group, method: '' },
+    { estimate: null, reason: 'no participant has a score under both conditions', pHow: '' },
+  );
+}
+
+/** Runs a row only where both groups have someone. */
+export function filled(run: Estimator['run']): Estimator['run'] {
+  return (samples, context) => {
+    if (samples.x.length > 0 && samples.y.length > 0) return run(samples, context);
+    const empty = samples.x.length === 0 ? samples.first : samples.second;
+    const words = { estimator: 'none', label: '', quantity: '', group: 'none', method: '' };
+    return makeRow(samples, context, words, { estimate: null, reason: `nobody is left in ${empty}`, pHow: '' });
+  };
 }

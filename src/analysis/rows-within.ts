@@ -1,18 +1,15 @@
-/** The rows of a comparison within participants: every participant has a score under both conditions. */
+/** Rows within participants on means, trimmed means and medians: every participant has a score under both conditions. */
 import { bootstrapOneSample, bootstrapPaired } from '../numerics/bootstrap.ts';
-import { hodgesLehmannPaired } from '../numerics/hodges-lehmann.ts';
-import { oneSampleT, pairedT } from '../numerics/one-sample-t.ts';
+import { pairedT } from '../numerics/one-sample-t.ts';
 import { differences } from '../numerics/scores.ts';
-import { signTest } from '../numerics/sign-test.ts';
-import { betaQuantile, betaQuantileUpper } from '../numerics/tails/beta.ts';
 import { trimmedMeanTest } from '../numerics/trimmed-mean.ts';
-import { signedRankTest } from '../numerics/wilcoxon.ts';
 import { winsorizedMeanTest } from '../numerics/winsorized.ts';
 import { yuenPaired } from '../numerics/yuen-paired.ts';
-import { pairedEffects, robustPairedEffect } from './effects.ts';
+import { robustPaired, standardizedPairs } from './effects-once.ts';
 import type { Estimator, RowContext } from './estimators.ts';
-import type { EffectSize, Finding, Limits } from './finding.ts';
-import { fromT, makeRow, turned } from './row.ts';
+import type { Finding } from './finding.ts';
+import { pairsEffect } from './pairs-share.ts';
+import { bootOptions, fewForBootstrap, fromBootstrap, fromT, makeRow, nobody, trimCautions } from './row.ts';
 import type { Samples } from './samples.ts';
 
 const within = {
@@ -22,7 +19,7 @@ const within = {
   closedForm: true,
 } as const;
 
-export const WITHIN_ROWS: readonly Estimator[] = [
+export const WITHIN_MEAN_ROWS: readonly Estimator[] = [
   { ...within, id: 'paired-t', untrimmed: 'paired-t', name: 'mean of differences', run: pairedMean },
   {
     ...within,
@@ -64,16 +61,6 @@ export const WITHIN_ROWS: readonly Estimator[] = [
     closedForm: false,
     run: marginalMedians,
   },
-  { ...within, id: 'signed-rank', untrimmed: 'signed-rank', name: 'Hodges\u2013Lehmann estimate', run: signedRank },
-  {
-    ...within,
-    id: 'paired-ratio',
-    untrimmed: 'paired-ratio',
-    name: 'ratio of geometric means',
-    sameUnit: false,
-    run: pairedRatio,
-  },
-  { ...within, id: 'pairs-share', untrimmed: 'pairs-share', name: 'share of pairs', sameUnit: false, run: pairsShare },
 ];
 
 function pairedMean(samples: Samples, context: RowContext): Finding {
@@ -90,7 +77,7 @@ function pairedMean(samples: Samples, context: RowContext): Finding {
       method:
         'Student 1908: t of the mean difference on n \u2212 1 df. Effect sizes: d_av by the average SD (Cumming 2012) with a percentile bootstrap interval; d_z by the SD of the differences with the noncentral t interval.',
     },
-    { ...fromT(pairedT(x, y, context)), effects: pairedEffects(x, y, context) },
+    { ...fromT(pairedT(x, y, context)), effects: standardizedPairs(samples, context) },
   );
 }
 
@@ -114,7 +101,7 @@ function trimmedDifferences(samples: Samples, context: RowContext): Finding {
     {
       ...fromT(test),
       h: [test.h, test.h],
-      effects: [robustPairedEffect(d, context.trim, context)],
+      effects: robustPaired(samples, context),
       cautions: trimCautions(context),
     },
   );
@@ -139,7 +126,7 @@ function marginalTrimmed(samples: Samples, context: RowContext): Finding {
     {
       ...fromT(test),
       h: [test.h, test.h],
-      effects: [robustPairedEffect(differences(samples.x, samples.y), context.trim, context)],
+      effects: robustPaired(samples, context),
       cautions: trimCautions(context),
     },
   );
@@ -165,7 +152,7 @@ function winsorizedDifferences(samples: Samples, context: RowContext): Finding {
     {
       ...fromT(test),
       h: [test.h, test.h],
-      effects: [robustPairedEffect(d, context.trim, context)],
+      effects: robustPaired(samples, context),
       cautions: trimCautions(context),
     },
   );
@@ -184,7 +171,7 @@ function medianDifferences(samples: Samples, context: RowContext): Finding {
       group: 'medians',
       method: `Percentile bootstrap of the median of the differences (Efron & Tibshirani 1993; Wilcox 2012, 5.9.11), ${context.resamples} resamples of participants, seed ${context.seed}; SE = SD of the resampled medians.`,
     },
-    { ...fromBootstrap(test, context), effects: [pairsEffect(samples, context)] },
+    { ...fromBootstrap(test, context), effects: [pairsEffect(samples, context)], cautions: fewForBootstrap(samples.x) },
   );
 }
 
@@ -201,184 +188,6 @@ function marginalMedians(samples: Samples, context: RowContext): Finding {
       group: 'differences of medians',
       method: `Percentile bootstrap of the difference of the two medians (Wilcox 2012, 5.9.11), ${context.resamples} resamples of participants, pairs kept, seed ${context.seed}.`,
     },
-    { ...fromBootstrap(test, context), effects: [pairsEffect(samples, context)] },
+    { ...fromBootstrap(test, context), effects: [pairsEffect(samples, context)], cautions: fewForBootstrap(samples.x) },
   );
-}
-
-function signedRank(samples: Samples, context: RowContext): Finding {
-  const label = 'Hodges\u2013Lehmann, signed-rank';
-  if (samples.x.length === 0) return nobody(samples, context, 'signed-rank', label, 'pseudomedians');
-  const d = differences(samples.x, samples.y);
-  const test = signedRankTest(d, { alternative: context.alternative });
-  const located = hodgesLehmannPaired(d, context);
-  return makeRow(
-    samples,
-    context,
-    {
-      estimator: 'signed-rank',
-      label,
-      quantity: 'centre of symmetry of the change',
-      group: 'pseudomedians',
-      method: `Hodges & Lehmann 1963: median of the pairwise means of the differences, interval from their order at the signed-rank quantile (${located.how}); test of Wilcoxon 1945, ${pMethod(test.method)}, zero differences dropped (${test.nZero}).`,
-    },
-    {
-      estimate: located.estimate,
-      reason: test.reason ?? located.reason,
-      statistic: { name: 'V', value: test.V },
-      p: test.p,
-      pHow: pMethod(test.method),
-      interval: test.p === null ? null : located.interval,
-      effects: [pairsEffect(samples, context)],
-      cautions: smallestSignP(test.nUsed, context),
-    },
-  );
-}
-
-function pairedRatio(samples: Samples, context: RowContext): Finding {
-  const words = {
-    estimator: 'paired-ratio',
-    label: 'ratio of geometric means',
-    quantity: 'typical proportional change',
-    group: 'ratios',
-    sameUnit: false,
-    nullValue: 1,
-    method:
-      't test of the mean log ratio, turned back: a ratio of geometric means with its t interval. It asks about proportions, not about differences in the unit.',
-  };
-  const nonPositive = countNonPositive(samples.x) + countNonPositive(samples.y);
-  if (samples.x.length === 0 || nonPositive > 0) {
-    const reason =
-      nonPositive > 0
-        ? `${nonPositive} scores are zero or negative and have no logarithm`
-        : 'no participant has both scores';
-    return makeRow(samples, context, words, {
-      estimate: null,
-      reason,
-      pHow: 't distribution of log ratios',
-      cautions: nonPositive > 0 ? ['R5'] : [],
-    });
-  }
-  const logs = samples.x.map((value, i) => Math.log(value / (samples.y[i] as number)));
-  const test = oneSampleT(logs, context);
-  const back = (value: number | null) => (value === null ? null : Math.exp(value));
-  return makeRow(samples, context, words, {
-    ...fromT(test),
-    estimate: back(test.estimate),
-    se: null,
-    interval: test.interval === null ? null : [back(test.interval[0]), back(test.interval[1])],
-    pHow: 't distribution of log ratios',
-  });
-}
-
-function pairsShare(samples: Samples, context: RowContext): Finding {
-  const lower = context.direction !== 'higher';
-  const label = `P(${context.first} ${lower ? 'lower' : 'higher'}) within pairs`;
-  const words = {
-    estimator: 'pairs-share',
-    label,
-    quantity: `share of participants whose ${context.first} score is the ${lower ? 'lower' : 'higher'}`,
-    group: 'probabilities',
-    sameUnit: false,
-    nullValue: 0.5,
-    reversed: lower,
-    method:
-      'Sign test (exact binomial, equal pairs dropped); share counts equal pairs as half, interval by Clopper & Pearson 1934.',
-  };
-  if (samples.x.length === 0)
-    return makeRow(samples, context, words, {
-      estimate: null,
-      reason: 'no participant has both scores',
-      pHow: 'exact binomial',
-    });
-  const test = signTest(differences(samples.x, samples.y), { alternative: context.alternative });
-  const { value, interval } = shareOfPairs(
-    samples,
-    lower,
-    lower ? turned(context.alternative) : context.alternative,
-    context.level,
-  );
-  return makeRow(samples, context, words, {
-    estimate: value,
-    reason: test.reason,
-    p: test.p,
-    pHow: 'exact binomial',
-    interval: test.p === null ? null : interval,
-    cautions: smallestSignP(test.nPositive + test.nNegative, context),
-  });
-}
-
-/** Share of pairs in which the first is lower (or higher), equal pairs as half, with the Clopper-Pearson interval. */
-function shareOfPairs(samples: Samples, lower: boolean, alternative: RowContext['alternative'], level: number) {
-  const n = samples.x.length;
-  let wins = 0;
-  for (let i = 0; i < n; i++) {
-    const d = (samples.x[i] as number) - (samples.y[i] as number);
-    wins += d === 0 ? 0.5 : d < 0 === lower ? 1 : 0;
-  }
-  const tail = alternative === 'two-sided' ? (1 - level) / 2 : 1 - level;
-  const low = wins === 0 ? 0 : betaQuantile(tail, wins, n - wins + 1);
-  const high = wins === n ? 1 : betaQuantileUpper(tail, wins + 1, n - wins);
-  const interval: Limits =
-    alternative === 'greater' ? [low, null] : alternative === 'less' ? [null, high] : [low, high];
-  return { value: wins / n, interval };
-}
-
-function pairsEffect(samples: Samples, context: RowContext): EffectSize {
-  const lower = context.direction !== 'higher';
-  const share = shareOfPairs(samples, lower, 'two-sided', context.level);
-  return {
-    name: `P(${context.first} ${lower ? 'lower' : 'higher'}) within pairs`,
-    value: share.value,
-    interval: share.interval,
-    how: 'Clopper & Pearson 1934',
-  };
-}
-
-function nobody(samples: Samples, context: RowContext, estimator: string, label: string, group: string): Finding {
-  return makeRow(
-    samples,
-    context,
-    { estimator, label, quantity: '', group, method: '' },
-    { estimate: null, reason: 'no participant has a score under both conditions', pHow: '' },
-  );
-}
-
-/** Options of a bootstrap row. */
-export function bootOptions(context: RowContext) {
-  return { B: context.resamples, seed: context.seed, level: context.level, alternative: context.alternative };
-}
-
-/** The numbers of a percentile bootstrap as a row has them. */
-export function fromBootstrap(
-  test: { estimate: number | null; se: number | null; p: number | null; interval: Limits | null; reason?: string },
-  context: RowContext,
-) {
-  return {
-    estimate: test.estimate,
-    reason: test.reason,
-    se: test.se,
-    p: test.p,
-    pHow: `percentile bootstrap, B = ${context.resamples}`,
-    interval: test.interval,
-  };
-}
-
-/** How a rank test's p was found, in words. */
-export function pMethod(method: string): string {
-  return method === 'asymptotic' ? 'normal approximation with tie and continuity correction' : 'exact conditional';
-}
-
-function trimCautions(context: RowContext): string[] {
-  return context.trim > 25 ? ['R3'] : [];
-}
-
-function smallestSignP(n: number, context: RowContext): string[] {
-  const smallest = (context.alternative === 'two-sided' ? 2 : 1) / 2 ** n;
-  return smallest > 1 - context.level ? ['R25'] : [];
-}
-
-function countNonPositive(values: Float64Array): number {
-  let count = 0;
-  for (const value of values) if (value <= 0) count++;
-  return count;
 }

@@ -1,12 +1,14 @@
+import { askedFactors } from './asked.ts';
 import { type ClaimSpec, type Verdict, verdictOf } from './claim.ts';
-import { type CompareArgs, compareRow, fittingEstimators, type Result, withholdsTextbook } from './compare.ts';
+import { type CompareArgs, type ComparisonSpec, compareRow, fittingEstimators, type Result } from './compare.ts';
 import type { Design } from './design.ts';
 import type { Estimator } from './estimators.ts';
 import { applyRules, withoutRules } from './exclusion.ts';
 import type { Finding } from './finding.ts';
 import { type ExtremeRule, onParticipants, type Rule, ruleLabel } from './rules.ts';
-import { takeSamples } from './samples.ts';
+import { type Samples, samplesFor } from './samples.ts';
 import { scoreDesign } from './score.ts';
+import { withholdsTextbook } from './withhold.ts';
 
 /** One analysis of the grid, and what it came to. */
 export interface Specification {
@@ -107,8 +109,8 @@ function specificationsOf(
 ): Keyed[] {
   const { comparison, scores } = result;
   const design = applyRules(base, rules);
-  const { factor, first, second } = comparison;
-  const samples = takeSamples(scoreDesign(design, scores.score), factor, first, second);
+  const { first } = comparison;
+  const samples = samplesFor(scoreDesign(design, scores.score), comparison);
   const { unit, direction, rows } = base.roles;
   // Effect sizes of the strip's lines are not shown, so that no line but the planned one resamples.
   const settings = own ? comparison : { ...comparison, resamples: 0 };
@@ -117,9 +119,9 @@ function specificationsOf(
     comparison: settings,
     unit,
     direction,
-    withheld: withholdsTextbook(rules, rows),
+    withheld: comparison.effect?.type !== 'value' && withholdsTextbook(rules, rows),
   };
-  const kept = keptKey(design, factor, [first, second]);
+  const kept = keptKey(design, comparison);
   return choices(result, own).map(({ estimator, trim }) => {
     const finding = compareRow(estimator, args, trim);
     const specification: Specification = {
@@ -138,7 +140,7 @@ function specificationsOf(
 /** The rows to run: the planned one for the worksheet's own rules, else every closed-form row at every trim. */
 function choices(result: Result, own: boolean): { estimator: Estimator; trim: number }[] {
   const { estimator: planned, trim } = result.comparison;
-  const fitting = fittingEstimators(result.scope);
+  const fitting = result.scope === 'omnibus' ? [] : fittingEstimators(result.scope);
   if (own) return fitting.filter((each) => each.id === planned).map((estimator) => ({ estimator, trim }));
   return fitting
     .filter((each) => each.sameUnit && each.closedForm)
@@ -146,21 +148,26 @@ function choices(result: Result, own: boolean): { estimator: Estimator; trim: nu
 }
 
 /** A trimmed row that trims nobody is the mean's row. */
-function estimatorKey(estimator: Estimator, trim: number, { x, y }: { x: Float64Array; y: Float64Array }): string {
+function estimatorKey(estimator: Estimator, trim: number, { x, y, parts }: Samples): string {
   if (!estimator.trims) return estimator.id;
-  const g = [x, y].map((each) => Math.floor((trim * each.length) / 100));
+  const g = (parts?.map((part) => part.scores) ?? [x, y]).map((each) => Math.floor((trim * each.length) / 100));
   return g.every((each) => each === 0) ? estimator.untrimmed : `${estimator.id} ${g.join(' ')}`;
 }
 
-/** The kept rows under the two conditions, packed 16 to a character. */
-function keptKey(design: Design, factorName: string, levels: readonly string[]): string {
-  const factor = design.factors.find((each) => each.name === factorName);
-  const wanted = new Set(levels.map((level) => factor?.levels.indexOf(level)));
+/** The kept rows under the conditions compared, packed 15 to a character. */
+function keptKey(design: Design, comparison: ComparisonSpec): string {
+  const { effect, factor: pairFactor, first, second } = comparison;
+  const [factor] =
+    effect === undefined
+      ? design.factors.filter((each) => each.name === pairFactor)
+      : askedFactors(design.factors, effect);
+  const levels = effect?.type === 'contrast' ? [...effect.first, ...effect.second] : [first, second];
+  const wanted = factor && new Set(levels.map((level) => factor.levels.indexOf(level)));
   let key = '';
   let word = 0;
   let bits = 0;
   for (let row = 0; row < design.kept.length; row++) {
-    if (!wanted.has(factor?.codes[row])) continue;
+    if (wanted && !wanted.has(factor?.codes[row] as number)) continue;
     word = word * 2 + (design.kept[row] as number);
     if (++bits === 15) {
       key += String.fromCharCode(word);

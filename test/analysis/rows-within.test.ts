@@ -28,24 +28,6 @@ describe('rows within participants', () => {
     expect(found.p).toBeCloseTo(0.041368, 6);
   });
 
-  it('agrees with library_disagreements 12, sleep: the median of the Walsh averages is 1.3', () => {
-    expect(row(findings, 'signed-rank').estimate).toBeCloseTo(1.3, 12);
-  });
-
-  it('by hand: the share of pairs counts the equal pair as half: 9 of 10 higher and one equal', () => {
-    const found = row(findings, 'pairs-share');
-    expect(found.estimate).toBeCloseTo(0.95, 12);
-    // Nine unequal pairs, all in one direction: 2 / 2^9.
-    expect(found.p).toBeCloseTo(2 / 512, 12);
-  });
-
-  it('refuses a ratio where scores are zero or negative, with the count', () => {
-    const found = row(findings, 'paired-ratio');
-    expect(found.estimate).toBeNull();
-    expect(found.reason).toMatch(/scores are zero or negative/);
-    expect(found.cautions).toContain('R5');
-  });
-
   it('theory: at trim 0 all closed-form mean rows are the paired t', () => {
     const zero = compareSamples(args(sleepSamples, { trim: 0 }));
     for (const id of ['trimmed-differences', 'marginal-trimmed', 'winsorized-differences']) {
@@ -57,11 +39,13 @@ describe('rows within participants', () => {
   it('invariance: turning the pair round turns estimates and limits and keeps p', () => {
     const swapped: Samples = { ...sleepSamples, first: 'drug1', second: 'drug2', x: sleepSamples.y, y: sleepSamples.x };
     const turned = compareSamples(args(swapped));
-    for (const found of findings.filter((each) => each.sameUnit)) {
+    for (const found of findings.filter((each) => each.sameUnit && each.interval !== null)) {
       const other = row(turned, found.estimator);
+      // The bootstrap-t draws other resamples of the turned differences: its limits move by their Monte Carlo error.
+      const places = found.estimator === 'trimmed-differences-boot-t' ? 1 : 10;
       expect(other.estimate).toBeCloseTo(-(found.estimate as number), 10);
-      expect(other.interval?.[0]).toBeCloseTo(-(found.interval?.[1] as number), 10);
-      expect(other.p).toBeCloseTo(found.p as number, 10);
+      expect(other.interval?.[0]).toBeCloseTo(-(found.interval?.[1] as number), places);
+      expect(other.p).toBeCloseTo(found.p as number, places);
     }
   });
 
@@ -69,7 +53,7 @@ describe('rows within participants', () => {
     const moved = compareSamples(
       args({ ...sleepSamples, x: sleepSamples.x.map((v) => 60 * v + 3), y: sleepSamples.y.map((v) => 60 * v + 3) }),
     );
-    for (const found of findings.filter((each) => each.sameUnit)) {
+    for (const found of findings.filter((each) => each.sameUnit && each.interval !== null)) {
       const other = row(moved, found.estimator);
       expect(other.estimate).toBeCloseTo(60 * (found.estimate as number), 8);
       expect(other.interval?.[0]).toBeCloseTo(60 * (found.interval?.[0] as number), 8);

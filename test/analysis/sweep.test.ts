@@ -1,12 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import type { ClaimSpec } from '../../src/analysis/claim.ts';
-import { type ComparisonSpec, compareSamples, type Result, withholdsTextbook } from '../../src/analysis/compare.ts';
+import { type ComparisonSpec, compareSamples, type Result } from '../../src/analysis/compare.ts';
 import { declareDesign, type Roles } from '../../src/analysis/design.ts';
 import { applyRules } from '../../src/analysis/exclusion.ts';
 import type { Rule } from '../../src/analysis/rules.ts';
 import { takeSamples } from '../../src/analysis/samples.ts';
 import { scoreDesign } from '../../src/analysis/score.ts';
 import { gridRules, sweepClaim, withExtreme } from '../../src/analysis/sweep.ts';
+import { withholdsTextbook } from '../../src/analysis/withhold.ts';
 import { rng } from '../../src/numerics/rng.ts';
 import { tableOf } from '../support/tables.ts';
 

@@ -7,7 +7,7 @@ import { scoreDesign } from '../../src/analysis/score.ts';
 import { tableOf } from './tables.ts';
 
 /** Columns of a reference data set, numbers where every cell is one. */
-function csv(name: string): Record<string, (number | string)[]> {
+export function csv(name: string): Record<string, (number | string)[]> {
   const lines = readFileSync(new URL(`../reference/cases/${name}.csv`, import.meta.url), 'utf8')
     .trim()
     .split(/\r?\n/);
