@@ -49,11 +49,32 @@ export function changeSentence(kind: Kind, before: Settings, after: Settings, co
   for (const [key, blank] of is) {
     const old = was.get(key);
     if (old === undefined) continue;
+    const tie = tied(old, blank, context);
+    if (tie !== null) {
+      changes.push(tie);
+      continue;
+    }
     const same = old.shown === blank.shown && old.filled === blank.filled;
     if (!same || longText(old) !== longText(blank)) changes.push(change(old, blank, codes));
   }
   const title = kind.title(after);
   return changes.length === 0 ? `${title}: settings changed` : `${title}: ${changes.join('; ')}`;
+}
+
+/** What changed where a number was tied to a shared one, or freed from it; null where neither. */
+function tied(before: Blank, after: Blank, context: Context): string | null {
+  const was = sharedIdOf(before);
+  const is = sharedIdOf(after);
+  if (was === is) return null;
+  if (is === null) return `${after.label} ${after.shown}, a number of its own`;
+  const name = context.shared.find((each) => each.id === is)?.name ?? is;
+  return `${after.label} follows the shared number ${name}, ${after.shown}`;
+}
+
+function sharedIdOf(blank: Blank): string | null {
+  if (blank.editor.type !== 'number') return null;
+  const { value } = blank.editor;
+  return value !== null && typeof value === 'object' ? value.shared : null;
 }
 
 function longText(blank: Blank): string | null {

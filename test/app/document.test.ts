@@ -154,6 +154,16 @@ describe('what the log says of a change', () => {
     expect(changeSentence(kind, before, { ...before }, context)).toBeNull();
   });
 
+  it('by hand: a number tied to a shared one, and freed from it', () => {
+    const shared = [{ id: 'k', name: 'cutoff of all', value: 2.5, unit: '', min: 0, max: 5, step: 0.5, none: true }];
+    const own = { cutoff: 2.5, words: '' };
+    const tied = { cutoff: { shared: 'k' }, words: '' };
+    expect(changeSentence(kind, own, tied, { ...context, shared })).toBe(
+      'exclusion: cutoff follows the shared number cutoff of all, 2.5',
+    );
+    expect(changeSentence(kind, tied, own, { ...context, shared })).toBe('exclusion: cutoff 2.5, a number of its own');
+  });
+
   it('refuses to name participants: chosen codes are counted', () => {
     const choices = (values: readonly string[]) => ({
       ...kind,
