@@ -1,6 +1,7 @@
 import './style/base.css';
 import './style/page.css';
 import './style/cell.css';
+import './style/output.css';
 import './style/editor.css';
 import './style/foot.css';
 import './style/sheet.css';
@@ -17,14 +18,14 @@ import { WorksheetDocument } from './document.ts';
 import { IdbStore } from './idb-store.ts';
 import { makeWorker } from './make-worker.ts';
 import { newWorksheet } from './new-worksheet.ts';
-import { remember, wantedId, worksheetFrom } from './open-worksheet.ts';
+import { remember, sayBroken, wantedId, worksheetFrom } from './open-worksheet.ts';
 import { listenToOtherTabs } from './other-tabs.ts';
-import { Page } from './page.ts';
+import { Page, type PageView } from './page.ts';
 import { listenToPage } from './page-events.ts';
 import { PROGRAM_VERSION } from './program-version.ts';
 import { signedAs } from './signed-as.ts';
-import { Autosave, type Store, storeSentence } from './storage.ts';
-import { applyTheme, firstTheme, followSystem } from './theme.ts';
+import { Autosave, type Store, storeSentence, type Timers } from './storage.ts';
+import { applyTheme, firstTheme, followSystem, type Theme } from './theme.ts';
 
 /** The worksheet to begin with: the one in the address or open last, else the first demo, else an empty one. */
 async function firstWorksheet(store: Store): Promise<{ worksheet: Worksheet; problem: string | null }> {
@@ -45,6 +46,27 @@ async function firstWorksheet(store: Store): Promise<{ worksheet: Worksheet; pro
   }
 }
 
+const timers: Timers = {
+  set: (run: () => void, ms: number) => window.setTimeout(run, ms),
+  clear: (timer: number) => window.clearTimeout(timer),
+  now: () => new Date().toISOString(),
+};
+
+/** What is open at the start. */
+function firstView(theme: Theme, problem: string | null): PageView {
+  return {
+    blank: null,
+    panel: null,
+    sheet: null,
+    banner: problem === null ? null : { text: problem, wrong: true },
+    theme,
+    save: { state: 'saved' },
+    pointed: null,
+    incoming: null,
+    foot: window.innerWidth >= 700 && window.innerHeight >= 560,
+  };
+}
+
 async function start(): Promise<void> {
   const theme = firstTheme();
   applyTheme(theme, false);
@@ -60,26 +82,8 @@ async function start(): Promise<void> {
   const runner = workerPool({ create: makeWorker });
   let page: Page | null = null;
   const engine = new Engine({ registry, runner, onState: (cellId) => page?.stateChanged(cellId) });
-  const timers = {
-    set: (run: () => void, ms: number) => window.setTimeout(run, ms),
-    clear: (timer: number) => window.clearTimeout(timer),
-    now: () => new Date().toISOString(),
-  };
   const autosave = new Autosave(store, timers, (save) => page?.show({ save }));
-  page = new Page(
-    { registry, views, document: document_, engine, runner, store, autosave },
-    {
-      blank: null,
-      panel: null,
-      sheet: null,
-      banner: problem === null ? null : { text: problem, wrong: true },
-      theme,
-      save: { state: 'saved' },
-      pointed: null,
-      incoming: null,
-      foot: window.innerWidth >= 700 && window.innerHeight >= 560,
-    },
-  );
+  page = new Page({ registry, views, document: document_, engine, runner, store, autosave }, firstView(theme, problem));
   const shown = page;
   followSystem((changed) => {
     applyTheme(changed, false);
@@ -92,6 +96,7 @@ async function start(): Promise<void> {
   const app = document.createElement('sf-app') as AppView;
   app.page = shown;
   document.querySelector('#page')?.replaceChildren(app);
+  void sayBroken(shown);
 }
 
 void start();

@@ -1,12 +1,12 @@
-import { checkLog } from '../worksheet/decision-log.ts';
 import type { DataBlock, Worksheet } from '../worksheet/format.ts';
 import { findWorksheetBlock } from '../worksheet/html.ts';
 import { parseWorksheet } from '../worksheet/parse.ts';
-import { readBlock } from './data-actions.ts';
 import type { Demo } from './demos.ts';
+import { brokenIn } from './log-check.ts';
 import { newWorksheet } from './new-worksheet.ts';
 import type { Page } from './page.ts';
 import { PROGRAM_VERSION } from './program-version.ts';
+import { readBlock } from './read-block.ts';
 
 const LAST = 'standfast.last';
 
@@ -41,9 +41,16 @@ export async function openWorksheet(page: Page, worksheet: Worksheet, keep: bool
   page.parts.document.replace(worksheet);
   remember(worksheet.id);
   if (keep) page.parts.autosave.changed(worksheet);
-  const log = checkLog(worksheet.log);
-  if (!log.whole) page.say(`${log.sentence} The worksheet is open all the same.`, true);
+  void sayBroken(page);
   window.scrollTo(0, 0);
+}
+
+/** Checks the decision log and the data of the worksheet that was opened, once its results are there. */
+export async function sayBroken(page: Page): Promise<void> {
+  const { worksheet } = page;
+  await page.parts.engine.idle();
+  const broken = brokenIn(worksheet);
+  if (broken.length > 0) page.say(`${broken.join(' ')} The worksheet is open all the same.`, true);
 }
 
 /** Puts the id of the open worksheet into the address, and remembers it for the next visit. */

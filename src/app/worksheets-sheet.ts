@@ -3,7 +3,7 @@ import type { Worksheet } from '../worksheet/format.ts';
 import { demoWorksheets } from './demos.ts';
 import { retitle } from './edits.ts';
 import { LightElement } from './light-element.ts';
-import { timeWords } from './log-sheet.ts';
+import { timeWords } from './log-words.ts';
 import { openDemo, openFile, openNew, openSaved } from './open-worksheet.ts';
 import type { Page } from './page.ts';
 import type { Saved } from './storage.ts';
@@ -71,7 +71,12 @@ export class WorksheetsSheet extends LightElement {
             </li>`,
         )}
       </ul>
-      <h3>Demo worksheets <span class="hint">(invented data)</span></h3>
+      ${this.#demos()}`;
+  }
+
+  #demos(): TemplateResult {
+    const { page } = this;
+    return html`<h3>Demo worksheets <span class="hint">(invented data)</span></h3>
       <ul class="kept" data-part="demo-list">
         ${demoWorksheets().map(
           (demo) =>
