@@ -1,3 +1,4 @@
+import type { Association } from '../src/analysis/association.ts';
 import type { ClaimValue } from '../src/analysis/claim.ts';
 import type { Result } from '../src/analysis/compare.ts';
 import type { Design } from '../src/analysis/design.ts';
@@ -16,6 +17,7 @@ export interface Values {
   readonly result: Result;
   readonly claim: ClaimValue;
   readonly sweep: Sweep;
+  readonly association: Association;
 }
 export type ValueType = keyof Values;
 

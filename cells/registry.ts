@@ -1,3 +1,4 @@
+import { associationKind } from './association/kind.ts';
 import { claimKind } from './claim/kind.ts';
 import { comparisonKind } from './comparison/kind.ts';
 import { dataKind } from './data/kind.ts';
@@ -19,6 +20,7 @@ export const registry = {
   exclusion: exclusionKind,
   score: scoreKind,
   comparison: comparisonKind,
+  association: associationKind,
   claim: claimKind,
   note: noteKind,
   standing: standingKind,

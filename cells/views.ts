@@ -1,4 +1,5 @@
 import { nothing, type TemplateResult } from 'lit';
+import { associationView } from './association/view.ts';
 import { claimView } from './claim/view.ts';
 import { comparisonView } from './comparison/view.ts';
 import { exclusionView } from './exclusion/view.ts';
@@ -23,6 +24,7 @@ export const views: Readonly<Record<KindName, View>> = {
   exclusion: exclusionView,
   score: scoreView,
   comparison: comparisonView,
+  association: associationView,
   claim: claimView,
   note: noteView,
   standing: standingView,

@@ -3,6 +3,9 @@
  * where the number comes from. Cells and comparisons decide whether a caution applies; the words stand here.
  */
 
+import { ASSOCIATION_CAUTIONS } from './cautions-association.ts';
+import { EXCLUSION_CAUTIONS } from './cautions-exclusion.ts';
+
 export interface CautionEntry {
   readonly action: 'refuse' | 'withhold' | 'warn' | 'say';
   /** The sentence, with what the case at hand fills in. */
@@ -151,6 +154,8 @@ export const CAUTIONS = {
       `The rule does not use the ${text(f, 'condition')}. If one ${text(f, 'condition')} is slower it can still lose more trials.`,
     source: 'Karch 2023; methods 0.2',
   },
+  ...ASSOCIATION_CAUTIONS,
+  ...EXCLUSION_CAUTIONS,
 } as const satisfies Readonly<Record<string, CautionEntry>>;
 
 export type CautionId = keyof typeof CAUTIONS;
