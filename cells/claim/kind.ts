@@ -13,7 +13,9 @@ export const claimKind = defineKind<ClaimSettings, { readonly result: 'result' }
   gives: 'claim',
   blind: 'veil',
   defaults: (context) => defaultSettings(context),
-  check(settings) {
+  check(settings, context) {
+    const result = context.given.result as Result | undefined;
+    if (result?.scope === 'omnibus') return [omnibusWords(result.comparison.first)];
     if (settings.first === '' || settings.second === '') return ['Say which two conditions the claim is about.'];
     if (settings.first === settings.second) return ['The claim needs two different conditions.'];
     return settings.margin === null ? ['Say the margin: 0 for any difference.'] : [];
@@ -21,6 +23,7 @@ export const claimKind = defineKind<ClaimSettings, { readonly result: 'result' }
   compute(settings, { result }) {
     const claim: ClaimSpec = { ...settings, margin: numberOf(settings.margin) ?? 0 };
     const { first, second } = result.comparison;
+    if (result.scope === 'omnibus') throw new Refusal(omnibusWords(first));
     if (![first, second].includes(claim.first) || ![first, second].includes(claim.second)) {
       throw new Refusal(
         `The claim is about ${claim.first} and ${claim.second}, but the comparison above is of ${first} with ${second}. Change one of the two.`,
@@ -42,6 +45,11 @@ export const claimKind = defineKind<ClaimSettings, { readonly result: 'result' }
   notes: ({ value }) => claimNotes(value),
   record: ({ value }) => ({ verdict: value.verdict }),
 });
+
+/** Why a comparison of several levels bears no claim. */
+function omnibusWords(about: string): string {
+  return `The comparison above is of ${about}: it says whether anything differs, not what, so no claim can be read from it. Add a comparison of two conditions, or of chosen levels, and let the claim read that one.`;
+}
 
 function verdictWords(value: ClaimValue): string {
   return value.verdict === null

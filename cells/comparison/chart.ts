@@ -70,12 +70,35 @@ export function ghostRows(
 
 /** Vega-Lite: estimates with intervals on one axis, labels left, numbers right; the planned row by a filled square. */
 export function comparisonChart(result: Result, context: ViewContext): Settings {
-  const rows = sameUnitRows(result).length;
-  const narrow = context.width < NARROW;
-  const step = narrow ? 62 : 27;
-  const plot = narrow ? context.width - 12 : context.width - LABEL - NUMBERS;
-  const { unit } = result.scores.design.roles;
   const { first, second } = result.comparison;
+  return intervalChart({
+    rows: sameUnitRows(result).length,
+    title: `${first} minus ${second}${unitWords(result)}`,
+    zero: true,
+    width: context.width,
+  });
+}
+
+/** The unit after an axis title: " (ms)". */
+export function unitWords(result: Result): string {
+  const { unit } = result.scores.design.roles;
+  return unit === '' ? '' : ` (${unit})`;
+}
+
+/** What an interval chart is made of; its rows come as data, so that it stays while their numbers turn. */
+export interface IntervalChart {
+  readonly rows: number;
+  readonly title: string;
+  /** Whether the axis holds zero, with a line at it: for differences. */
+  readonly zero: boolean;
+  readonly width: number;
+}
+
+/** One axis of estimates with intervals, for DrawnRows. */
+export function intervalChart({ rows, title, zero, width }: IntervalChart): Settings {
+  const narrow = width < NARROW;
+  const step = narrow ? 62 : 27;
+  const plot = narrow ? width - 12 : width - LABEL - NUMBERS;
   const y = {
     field: 'y',
     type: 'quantitative',
@@ -84,25 +107,26 @@ export function comparisonChart(result: Result, context: ViewContext): Settings 
   };
   const x = {
     type: 'quantitative',
-    scale: { zero: true, nice: false, padding: 8 },
-    axis: {
-      title: `${first} minus ${second}${unit === '' ? '' : ` (${unit})`}`,
-      tickCount: narrow ? 4 : 5,
-      grid: false,
-      ticks: true,
-      domain: true,
-    },
+    scale: { zero, nice: false, padding: 8 },
+    axis: { title, tickCount: narrow ? 4 : 5, grid: false, ticks: true, domain: true },
   };
   return {
     width: Math.max(120, plot),
     height: rows * step,
     padding: { left: narrow ? 6 : LABEL, right: narrow ? 6 : NUMBERS, top: 2, bottom: AXIS },
     autosize: { type: 'none' },
-    layer: [...marks(x, y, narrow ? 18 : 0), ...texts(y, { narrow, plot })],
+    layer: [...(zero ? [zeroLine(x)] : []), ...marks(x, y, narrow ? 18 : 0), ...texts(y, { narrow, plot })],
   } as unknown as Settings;
 }
 
 type Channel = Readonly<Record<string, unknown>>;
+
+function zeroLine(x: Channel): Channel {
+  return {
+    mark: { type: 'rule', strokeDash: [3, 3] },
+    encoding: { x: { ...x, datum: 0 }, color: { value: 'var(--soft)' } },
+  };
+}
 
 function marks(x: Channel, y: Channel, yOffset: number): Channel[] {
   const planned = 'datum.planned';

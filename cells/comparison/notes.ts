@@ -1,22 +1,22 @@
 import { type CautionId, cautionText, simulatedLevel } from '../../src/analysis/cautions.ts';
 import type { Result } from '../../src/analysis/compare.ts';
 import { participantNoun } from '../../src/analysis/design.ts';
+import type { Finding } from '../../src/analysis/finding.ts';
 import { LEAST_FOR_P } from '../../src/analysis/row.ts';
-import { takeSamples } from '../../src/analysis/samples.ts';
-import { standardDeviation } from '../../src/numerics/moments.ts';
+import { spreadOf } from '../../src/analysis/rows-omnibus-between.ts';
+import { type Samples, samplesFor } from '../../src/analysis/samples.ts';
 import type { Note } from '../kind.ts';
 import { alphaText, count, counted, fixed, levelPercent, plural } from '../numbers.ts';
+import { omnibusNotes } from './notes-omnibus.ts';
 
 /** What the margin says beside a comparison. */
 export function comparisonNotes(result: Result): Note[] {
+  if (result.scope === 'omnibus') return omnibusNotes(result);
   const { first, second, resamples, seed } = result.comparison;
   const { unit } = result.scores.design.roles;
   const planned = result.findings[result.planned];
   const noun = participantNoun(result.scores.design.roles);
-  const people =
-    result.scope === 'within'
-      ? `${counted(planned?.n ?? 0, noun)} with both ${plural(result.comparison.factor)}`
-      : (planned?.counts ?? []).map((each) => `${count(each.n)} ${each.condition}`).join(', ');
+  const people = peopleWords(result, planned, noun);
   const notes: Note[] = [
     {
       type: 'note',
@@ -35,8 +35,17 @@ export function comparisonNotes(result: Result): Note[] {
   return notes;
 }
 
+function peopleWords(result: Result, planned: Finding | undefined, noun: string): string {
+  if (result.scope === 'value') return counted(planned?.n ?? 0, noun);
+  if (result.scope !== 'within') {
+    return (planned?.counts ?? []).map((each) => `${count(each.n)} ${each.condition}`).join(', ');
+  }
+  const which = result.comparison.effect ? 'every score compared' : `both ${plural(result.comparison.factor)}`;
+  return `${counted(planned?.n ?? 0, noun)} with ${which}`;
+}
+
 function warns(id: CautionId): boolean {
-  return id !== 'R15';
+  return id !== 'R15' && id !== 'R2P';
 }
 
 /** The cautions of every row, once each, the same in any order of rows. */
@@ -44,7 +53,7 @@ function applying(result: Result): CautionId[] {
   const ids = new Set<string>();
   for (const finding of result.findings) for (const id of finding.cautions) ids.add(id);
   if (result.findings.some((finding) => !finding.sameUnit && finding.estimate !== null)) ids.add('R20');
-  const order: CautionId[] = ['R2', 'R22', 'R3', 'R18', 'R24', 'R25', 'R5', 'R20', 'R15'];
+  const order: CautionId[] = ['R2', 'R2P', 'R22', 'R3', 'R18', 'R24', 'R17', 'R25', 'R5', 'R20', 'R15'];
   return order.filter((id) => ids.has(id));
 }
 
@@ -57,11 +66,15 @@ function factsOf(id: CautionId, result: Result): Readonly<Record<string, string 
       return { trim: comparison.trim };
     case 'R5':
       return { n: count(nonPositive(result)) };
+    case 'R17':
+      return {
+        counts: (result.findings[0]?.counts ?? []).map((each) => `${each.n} under ${each.condition}`).join(', '),
+      };
     case 'R18':
       return spreadFacts(result);
     case 'R20':
       return {
-        rows: 'The ratio and the probability',
+        rows: result.scope === 'value' ? 'The share' : 'The ratio and the probability',
         unit: scores.design.roles.unit || 'means',
       };
     case 'R22':
@@ -75,9 +88,8 @@ function factsOf(id: CautionId, result: Result): Readonly<Record<string, string 
   }
 }
 
-function samplesOf(result: Result) {
-  const { factor, first, second } = result.comparison;
-  return takeSamples(result.scores, factor, first, second);
+function samplesOf(result: Result): Samples {
+  return samplesFor(result.scores, result.comparison);
 }
 
 function nonPositive(result: Result): number {
@@ -86,14 +98,16 @@ function nonPositive(result: Result): number {
 }
 
 function spreadFacts(result: Result): Record<string, string> {
-  const { x, y } = samplesOf(result);
-  const [sx, sy] = [standardDeviation(x), standardDeviation(y)];
-  const larger = sx > sy ? x : y;
-  const smallGroup = larger.length < Math.max(x.length, y.length);
+  const { x, y, parts } = samplesOf(result);
+  const spread = spreadOf(parts?.map((part) => part.scores) ?? [x, y]);
+  const small = (spread?.withSize ?? 0) < 0;
   return {
-    ratio: fixed(Math.max(sx, sy) / Math.min(sx, sy), 1),
-    where: smallGroup ? 'smaller' : 'larger',
-    bias: smallGroup ? 'liberal (too many false alarms)' : 'conservative (too few)',
+    ratio: fixed(spread?.ratio ?? 1, 1),
+    where: small ? 'smaller' : 'larger',
+    groups: parts ? 'groups' : 'group',
+    test: parts ? 'the row with one spread' : "Student's test",
+    bias: small ? 'liberal (too many false alarms)' : 'conservative (too few)',
+    beside: "Welch's row",
   };
 }
 
@@ -112,7 +126,12 @@ function smallestFacts(result: Result): Record<string, string> {
     for (let i = 1; i <= x.length; i++) ways = (ways * (y.length + i)) / i;
   }
   return {
-    n: result.scope === 'within' ? `${x.length} pairs` : `groups of ${x.length} and ${y.length}`,
+    n:
+      result.scope === 'within'
+        ? `${x.length} pairs`
+        : result.scope === 'value'
+          ? `${x.length} scores`
+          : `groups of ${x.length} and ${y.length}`,
     smallest: fixed(sides / ways, 3).replace(/^0/, ''),
     alpha: alphaText(result.comparison.alpha).slice(4),
   };

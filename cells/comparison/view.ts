@@ -3,10 +3,12 @@ import type { Result } from '../../src/analysis/compare.ts';
 import type { Computed, ViewContext } from '../kind.ts';
 import { pValue } from '../numbers.ts';
 import { comparisonChart, ghostRows, sameUnitRows } from './chart.ts';
+import { omnibusView } from './view-omnibus.ts';
 import { estimateText, sayFinding } from './words.ts';
 
 /** Rows in the outcome's unit on one axis; other quantities below, each on its own scale. */
 export function comparisonView({ value }: Computed<Result, null>, context: ViewContext): TemplateResult {
+  if (value.scope === 'omnibus') return omnibusView(value, context);
   const rows = sameUnitRows(value).map((row) => ({
     ...row,
     estimate: Number.isNaN(row.estimate) ? null : row.estimate,

@@ -26,11 +26,12 @@ export function estimateText(finding: Finding, decimals = decimalsOf(finding)): 
     : `${write(finding.estimate)} ${limits(finding.interval, write)}`;
 }
 
-/** "t(21) = −3.77", "V = 96". */
+/** "t(21) = −3.77", "V = 96", "F(2, 27) = 4.85". */
 export function statisticText(finding: Finding): string {
   if (!finding.statistic) return '';
   const { name, value } = finding.statistic;
-  const df = finding.df === null ? '' : `(${degrees(finding.df)})`;
+  const second = finding.df2 === undefined || finding.df2 === null ? '' : `, ${degrees(finding.df2)}`;
+  const df = finding.df === null ? '' : `(${degrees(finding.df)}${second})`;
   return `${name}${df} = ${fixed(value, Number.isInteger(value) ? 0 : 2)}`;
 }
 
@@ -52,19 +53,20 @@ export function sayFinding(result: Result): string {
   return `${order}, ${finding.label}: ${write(finding.estimate)}${unit}${interval}${test.length > 0 ? `, ${test.join(', ')}` : ''}${sized}; n = ${count(finding.n)}${finding.reason ? ` (${finding.reason})` : ''}.`;
 }
 
+/** Effect sizes that cannot exceed one. */
+const SHARES = /^P\(|\u00b2$|share of variance$|agreement$|Kendall W$/;
+
 /** "d_av (average SD) = −0.41 [−0.72, −0.12]". */
 export function effectText(effect: EffectSize): string {
   if (effect.value === null) return `${effect.name}: not given (${effect.reason ?? ''})`;
-  const write = effect.name.startsWith('P(')
-    ? (value: number) => bounded(value, 2)
-    : (value: number) => fixed(value, 2);
+  const write = SHARES.test(effect.name) ? (value: number) => bounded(value, 2) : (value: number) => fixed(value, 2);
   return `${effect.name} = ${write(effect.value)}${effect.interval ? ` ${limits(effect.interval, write)}` : ''}`;
 }
 
 /** Every row with every number. */
 export function findingTable(result: Result): TableOut {
   const unit = result.scores.design.roles.unit;
-  const { first, second } = result.comparison;
+  const kept = (result.findings[0]?.counts ?? []).map((each) => `${each.condition} averaged`);
   const names = [
     'row',
     'planned',
@@ -79,11 +81,10 @@ export function findingTable(result: Result): TableOut {
     'lower',
     'upper',
     'n',
-    `${first} averaged`,
-    `${second} averaged`,
+    ...kept,
     'remark',
   ];
-  const numeric = new Set(['estimate', 'SE', 'df', 'lower', 'upper', 'n', `${first} averaged`, `${second} averaged`]);
+  const numeric = new Set(['estimate', 'SE', 'df', 'lower', 'upper', 'n', ...kept]);
   return {
     title: 'every row',
     columns: names.map((name) => ({ name, numeric: numeric.has(name) })),
@@ -135,7 +136,7 @@ function rawRow(finding: Finding, planned: boolean): (string | number | null)[] 
 }
 
 function keptCounts(finding: Finding): number[] {
-  return [finding.counts[0]?.h ?? 0, finding.counts[1]?.h ?? 0];
+  return finding.counts.map((each) => each.h);
 }
 
 /** Every effect size with its interval, and how each row is computed. */

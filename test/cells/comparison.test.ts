@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { claimKind } from '../../cells/claim/kind.ts';
 import { comparisonKind } from '../../cells/comparison/kind.ts';
-import type { ComparisonSettings } from '../../cells/comparison/sentence.ts';
+import type { ComparisonSettings } from '../../cells/comparison/settings.ts';
 import { plainSentence } from '../../cells/kind.ts';
 import { sayCounts, standingKind } from '../../cells/standing/kind.ts';
 import type { ClaimValue } from '../../src/analysis/claim.ts';
