@@ -186,7 +186,7 @@ const glovePegTest: Plan = {
 };
 
 const HEARING_NOTE = [
-  'The clinic asks how words follow the hearing level. Here listeners with an aid are held against those without one:',
+  'The clinic asks how words follow the hearing level. Below, listeners with an aid are held against those without one:',
   'nobody was given an aid by chance, so the difference says who wears one, not what it does.',
 ].join(' ');
 
@@ -199,6 +199,19 @@ const hearingWords: Plan = {
   cells: [
     { kind: 'note', settings: { text: HEARING_NOTE } },
     { kind: 'data', settings: { data: 'd1', row: 'participant', participant: null } },
+    {
+      kind: 'association',
+      settings: {
+        x: 'hearing_level_db',
+        y: 'words_percent',
+        participant: 'listener',
+        estimator: 'percentage-bend',
+        trim: 20,
+        alternative: 'two-sided',
+        alpha: 0.05,
+        resamples: 999,
+      },
+    },
     {
       kind: 'derive',
       settings: {
