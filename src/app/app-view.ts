@@ -6,6 +6,7 @@ import './foot-view.ts';
 import './head-view.ts';
 import './log-sheet.ts';
 import './points.ts';
+import './save-sheet.ts';
 import './sheet-view.ts';
 import type { StemView } from './stem-view.ts';
 import './stem-view.ts';
@@ -16,7 +17,7 @@ import { claimOf, plannedOf } from './hold-reference.ts';
 import { LightElement } from './light-element.ts';
 import type { Page } from './page.ts';
 import { saidOf } from './said.ts';
-import { incomingSheet, keysSheet, openConditionsSheet, saveSheet } from './small-sheets.ts';
+import { incomingSheet, keysSheet, openConditionsSheet } from './small-sheets.ts';
 import { stripModel } from './strip-model.ts';
 import { thenView } from './then-view.ts';
 import { dependentsOf } from './wiring.ts';
@@ -115,17 +116,7 @@ export class AppView extends LightElement {
       ${this.#banner()}
       <main id="cells" tabindex="-1" class=${narrow ? 'narrow' : 'wide'} @pointerover=${this.#point} @focusin=${this.#point}>
         ${narrow ? nothing : this.#stem(models)}
-        ${repeat(
-          models,
-          (model) => model.cell.id,
-          (model, i) =>
-            html`<sf-cell
-              .page=${page}
-              .model=${model}
-              .narrow=${narrow}
-              .last=${i === models.length - 1}
-            ></sf-cell>`,
-        )}
+        ${this.#cells(models, narrow)}
         <div class="end">${thenView(page, models.at(-1)?.cell.id ?? null, this.#thenOpen(models), true)}</div>
       </main>
       <sf-foot
@@ -171,6 +162,21 @@ export class AppView extends LightElement {
       .cells=${this.#stemCells} .pointed=${pointed} .dependents=${dependents}></sf-stem>`;
   }
 
+  #cells(models: readonly CellModel[], narrow: boolean): unknown {
+    const { page } = this;
+    return repeat(
+      models,
+      (model) => model.cell.id,
+      (model, i) =>
+        html`<sf-cell
+              .page=${page}
+              .model=${model}
+              .narrow=${narrow}
+              .last=${i === models.length - 1}
+            ></sf-cell>`,
+    );
+  }
+
   #banner(): TemplateResult | typeof nothing {
     const { banner } = this.page.view;
     if (banner === null) return nothing;
@@ -195,7 +201,7 @@ export class AppView extends LightElement {
       },
       keys: { heading: 'Keys', content: keysSheet() },
       worksheets: { heading: 'Worksheets', content: html`<sf-worksheets .page=${page}></sf-worksheets>` },
-      save: { heading: 'Save a copy', content: saveSheet(page) },
+      save: { heading: 'Save a copy', content: html`<sf-save .page=${page} .worksheet=${page.worksheet}></sf-save>` },
       open: { heading: 'Open the conditions', content: openConditionsSheet(page) },
       incoming: { heading: 'These data', content: incomingSheet(page) },
     };

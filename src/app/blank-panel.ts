@@ -4,13 +4,15 @@ import './choices-editor.ts';
 import './file-editor.ts';
 import './number-editor.ts';
 import './text-editor.ts';
-import type { Blank, Num } from '../../cells/kind.ts';
+import type { Blank, Editor, Num, Settings } from '../../cells/kind.ts';
 import { setShared } from './cell-actions.ts';
 import { fileActions } from './data-actions.ts';
 import { demoFiles } from './demos.ts';
 import { LightElement } from './light-element.ts';
 import type { Page } from './page.ts';
 import { shareBlank } from './share-blank.ts';
+
+type EditorOf<T extends Editor['type']> = Extract<Editor, { type: T }>;
 
 /** The small panel under a blank in which it is filled; Escape closes it and the focus goes back to the blank. */
 export class BlankPanel extends LightElement {
@@ -58,64 +60,74 @@ export class BlankPanel extends LightElement {
     this.querySelector('.panel')?.scrollIntoView({ block: 'nearest' });
   }
 
+  #fill(settings: Settings): void {
+    if (!this.#givenUp) this.page.fill(this.cellId, this.blank.key, settings);
+  }
+
   #editor(): TemplateResult {
     const { blank, page, cellId } = this;
-    const editor = blank.editor;
-    const fill = (settings: Parameters<Page['fill']>[2]): void => {
-      if (!this.#givenUp) page.fill(cellId, blank.key, settings);
-    };
+    const { editor, label } = blank;
+    const close = (): void => this.#close(true);
     switch (editor.type) {
       case 'choice': {
         const choose = (value: string): void => {
-          fill(editor.set(value));
-          this.#close(true);
+          this.#fill(editor.set(value));
+          close();
         };
-        return html`<sf-choice
-          .options=${editor.options}
-          .value=${editor.value}
-          .label=${blank.label}
-          .choose=${choose}
-        ></sf-choice>`;
+        const { options, value } = editor;
+        return html`<sf-choice .options=${options} .value=${value} .label=${label} .choose=${choose}></sf-choice>`;
       }
       case 'choices':
-        return html`<sf-choices
-          .options=${editor.options}
-          .values=${editor.values}
-          .atLeast=${editor.atLeast}
-          .label=${blank.label}
-          .choose=${(values: readonly string[]) => fill(editor.set(values))}
-        ></sf-choices>`;
-      case 'number': {
-        const actions = {
-          set: (value: Num) => fill(editor.set(value)),
-          setShared: (id: string, value: number | null) => {
-            if (!this.#givenUp) setShared(page, id, value);
-          },
-          share: (name: string) => shareBlank(page, cellId, blank, name),
-        };
-        return html`<sf-number
-          .editor=${editor}
-          .shared=${page.worksheet.shared}
-          .label=${blank.label}
-          .actions=${actions}
-        ></sf-number>`;
-      }
+        return this.#choices(editor);
+      case 'number':
+        return this.#number(editor);
       case 'text':
-        return html`<sf-text
-          .value=${editor.value}
-          .long=${editor.long}
-          .label=${blank.label}
-          .check=${editor.check}
-          .set=${(value: string) => fill(editor.set(value))}
-        ></sf-text>`;
+        return this.#text(editor);
       case 'file':
         return html`<sf-file
           .value=${editor.value}
           .blocks=${page.worksheet.data}
           .demos=${demoFiles()}
-          .actions=${fileActions(page, cellId, blank.key, editor, () => this.#close(true))}
+          .actions=${fileActions(page, cellId, blank.key, editor, close)}
         ></sf-file>`;
     }
+  }
+
+  #choices(editor: EditorOf<'choices'>): TemplateResult {
+    return html`<sf-choices
+      .options=${editor.options}
+      .values=${editor.values}
+      .atLeast=${editor.atLeast}
+      .label=${this.blank.label}
+      .choose=${(values: readonly string[]) => this.#fill(editor.set(values))}
+    ></sf-choices>`;
+  }
+
+  #number(editor: EditorOf<'number'>): TemplateResult {
+    const { page, cellId, blank } = this;
+    const actions = {
+      set: (value: Num) => this.#fill(editor.set(value)),
+      setShared: (id: string, value: number | null) => {
+        if (!this.#givenUp) setShared(page, id, value);
+      },
+      share: (name: string) => shareBlank(page, cellId, blank, name),
+    };
+    return html`<sf-number
+      .editor=${editor}
+      .shared=${page.worksheet.shared}
+      .label=${blank.label}
+      .actions=${actions}
+    ></sf-number>`;
+  }
+
+  #text(editor: EditorOf<'text'>): TemplateResult {
+    return html`<sf-text
+      .value=${editor.value}
+      .long=${editor.long}
+      .label=${this.blank.label}
+      .check=${editor.check}
+      .set=${(value: string) => this.#fill(editor.set(value))}
+    ></sf-text>`;
   }
 
   #blankElement(): HTMLElement | null {

@@ -1,25 +1,15 @@
 import type { Editor, Settings } from '../../cells/kind.ts';
 import { count } from '../../cells/numbers.ts';
 import type { DataBlock } from '../worksheet/format.ts';
-import { blockFromBytes, nextBlockId } from './data-block.ts';
 import { demoFile } from './demos.ts';
 import { setData } from './edits.ts';
 import type { FileActions } from './file-editor.ts';
 import { looksLikeWorksheet, openWorksheetText } from './open-worksheet.ts';
 import type { Page } from './page.ts';
+import { readBlock } from './read-block.ts';
 import { visibleCells } from './wiring.ts';
 
 type FileBlank = Extract<Editor, { type: 'file' }>;
-
-/** Reads bytes into a data block; where they cannot be read, says why and gives null: the worksheet stays as it is. */
-export function readBlock(page: Page, bytes: Uint8Array, name: string): DataBlock | null {
-  try {
-    return blockFromBytes(bytes, name, nextBlockId(page.worksheet));
-  } catch (error) {
-    page.say(error instanceof Error ? error.message : String(error), true);
-    return null;
-  }
-}
 
 function fillFile(page: Page, cellId: string, block: DataBlock, settings: Settings): void {
   const known = page.worksheet.data.find((each) => each.fingerprint.bytes === block.fingerprint.bytes);

@@ -11,40 +11,19 @@ import { views } from '../../cells/views.ts';
 import { Engine } from '../engine/engine.ts';
 import { workerPool } from '../workers/pool.ts';
 import { appendEntry } from '../worksheet/decision-log.ts';
-import type { Worksheet } from '../worksheet/format.ts';
 import type { AppView } from './app-view.ts';
-import { demoWorksheets } from './demos.ts';
 import { WorksheetDocument } from './document.ts';
+import { firstWorksheet } from './first-worksheet.ts';
 import { IdbStore } from './idb-store.ts';
 import { makeWorker } from './make-worker.ts';
-import { newWorksheet } from './new-worksheet.ts';
-import { remember, sayBroken, wantedId, worksheetFrom } from './open-worksheet.ts';
+import { remember, sayBroken } from './open-worksheet.ts';
 import { listenToOtherTabs } from './other-tabs.ts';
 import { Page, type PageView } from './page.ts';
 import { listenToPage } from './page-events.ts';
-import { PROGRAM_VERSION } from './program-version.ts';
+import { carriedText, keepPage } from './save-page.ts';
 import { signedAs } from './signed-as.ts';
-import { Autosave, type Store, storeSentence, type Timers } from './storage.ts';
+import { Autosave, type Timers } from './storage.ts';
 import { applyTheme, firstTheme, followSystem, type Theme } from './theme.ts';
-
-/** The worksheet to begin with: the one in the address or open last, else the first demo, else an empty one. */
-async function firstWorksheet(store: Store): Promise<{ worksheet: Worksheet; problem: string | null }> {
-  const demos = demoWorksheets().flatMap((demo) => {
-    const opened = worksheetFrom(demo.text, demo.name);
-    return 'worksheet' in opened ? [opened.worksheet] : [];
-  });
-  const seed = crypto.getRandomValues(new Uint32Array(1))[0] as number;
-  const empty = { id: crypto.randomUUID(), seed, program: PROGRAM_VERSION, registry, block: null };
-  const fallback = demos[0] ?? newWorksheet(empty);
-  const id = wantedId();
-  if (id === null) return { worksheet: fallback, problem: null };
-  try {
-    const kept = await store.get(id);
-    return { worksheet: kept ?? demos.find((demo) => demo.id === id) ?? fallback, problem: null };
-  } catch (error) {
-    return { worksheet: demos.find((demo) => demo.id === id) ?? fallback, problem: storeSentence(error) };
-  }
-}
 
 const timers: Timers = {
   set: (run: () => void, ms: number) => window.setTimeout(run, ms),
@@ -68,10 +47,11 @@ function firstView(theme: Theme, problem: string | null): PageView {
 }
 
 async function start(): Promise<void> {
+  keepPage();
   const theme = firstTheme();
   applyTheme(theme, false);
   const store = new IdbStore();
-  const { worksheet, problem } = await firstWorksheet(store);
+  const { worksheet, problem } = await firstWorksheet(store, carriedText());
   const document_ = new WorksheetDocument({
     worksheet,
     now: () => new Date().toISOString(),
@@ -99,4 +79,8 @@ async function start(): Promise<void> {
   void sayBroken(shown);
 }
 
-void start();
+start().catch((error: unknown) => {
+  const place = document.querySelector('#page');
+  const words = error instanceof Error ? error.message : String(error);
+  if (place !== null) place.textContent = `Standfast could not open: ${words}. What was saved in this browser is kept.`;
+});

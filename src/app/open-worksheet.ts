@@ -64,10 +64,16 @@ export function remember(id: string): void {
   }
 }
 
+/** The worksheet named in the address. */
+export function namedId(): string | null {
+  const named = /^#w=(.+)$/.exec(location.hash)?.[1];
+  return named === undefined ? null : decodeURIComponent(named);
+}
+
 /** The worksheet named in the address, or the one open last. */
 export function wantedId(): string | null {
-  const named = /^#w=(.+)$/.exec(location.hash)?.[1];
-  if (named !== undefined) return decodeURIComponent(named);
+  const named = namedId();
+  if (named !== null) return named;
   try {
     return localStorage.getItem(LAST);
   } catch {

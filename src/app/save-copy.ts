@@ -1,27 +1,42 @@
-import { recordResults, resultsOf } from '../replay/record.ts';
+import { computedParts, type SavedParts, savedParts } from '../replay/saved-parts.ts';
 import type { Worksheet } from '../worksheet/format.ts';
+import { pageWithWorksheet } from '../worksheet/html.ts';
+import { readablePart } from '../worksheet/readable.ts';
 import { writeWorksheet } from '../worksheet/write.ts';
 import { download, safeName } from './download.ts';
 import type { Page } from './page.ts';
 import { PROGRAM_VERSION } from './program-version.ts';
+import { pageAsBuilt } from './save-page.ts';
 
-/** The worksheet with every cell's result to full precision, as the engine has them; worked out again if it was edited meanwhile. */
-async function recorded(page: Page): Promise<Worksheet> {
+/** One file that opens by itself, or the worksheet alone. */
+export type CopyType = 'html' | 'json';
+
+/** What goes into the file, from the page's own engine; worked out again where that shows another worksheet by now. */
+async function partsOf(page: Page, worksheet: Worksheet): Promise<SavedParts> {
   const { registry, runner, engine } = page.parts;
-  const { worksheet } = page;
-  const results = await resultsOf(engine, worksheet, registry);
-  if (page.worksheet !== worksheet) return recordResults(page.worksheet, registry, runner, PROGRAM_VERSION);
-  return { ...worksheet, results, program: { name: 'standfast', version: PROGRAM_VERSION } };
+  if (page.worksheet === worksheet) {
+    const parts = await savedParts(engine, worksheet, registry, PROGRAM_VERSION);
+    if (page.worksheet === worksheet) return parts;
+  }
+  return computedParts(worksheet, registry, runner, PROGRAM_VERSION);
 }
 
-/** Saves the worksheet with its results. */
-export async function saveCopy(page: Page): Promise<void> {
+function fileOf({ worksheet, cells }: SavedParts, type: CopyType): Blob {
+  const json = writeWorksheet(worksheet);
+  if (type === 'json') return new Blob([json], { type: 'application/json' });
+  const page = pageAsBuilt();
+  if (page === null) throw new Error('the program is not inside this page');
+  return new Blob([pageWithWorksheet(page, readablePart(worksheet, cells), json)], { type: 'text/html' });
+}
+
+/** Saves a worksheet with its results: the open one, or one made from it for sharing. */
+export async function saveCopy(page: Page, worksheet: Worksheet, type: CopyType): Promise<void> {
   page.show({ sheet: null });
   page.say('Working out the results that go into the file \u2026');
   try {
-    const whole = await recorded(page);
-    const name = `${safeName(whole.title)}.standfast.json`;
-    download(new Blob([writeWorksheet(whole)], { type: 'application/json' }), name);
+    const parts = await partsOf(page, worksheet);
+    const name = `${safeName(worksheet.title)}.standfast.${type}`;
+    download(fileOf(parts, type), name);
     page.say(`Saved as ${name}.`);
   } catch (error) {
     page.say(`The file could not be saved: ${error instanceof Error ? error.message : String(error)}`, true);

@@ -4,7 +4,6 @@ import { CELL_KEYS } from './cell-keys.ts';
 import { fileBlanks, giveTo } from './data-actions.ts';
 import { openNew } from './open-worksheet.ts';
 import type { Page } from './page.ts';
-import { saveCopy } from './save-copy.ts';
 
 /** The keys, in words. */
 export function keysSheet(): TemplateResult {
@@ -52,30 +51,6 @@ export function openConditionsSheet(page: Page): TemplateResult {
     </label>
     <div class="words"><button type="submit" class="word main" data-part="open-now">open the conditions</button></div>
   </form>`;
-}
-
-/** What a saved file carries, before it is saved. */
-export function saveSheet(page: Page): TemplateResult {
-  const { worksheet } = page;
-  const rows = worksheet.data.reduce((sum, block) => sum + block.rows, 0);
-  const blind = worksheet.opening.state === 'blind';
-  return html`<p>
-      The file holds the sentences, the decision log, the results to full precision, and the participants\u2019 data:
-      ${count(rows)} rows. Give it only to those who may have them.
-    </p>
-    ${
-      blind
-        ? html`<p class="caution">
-            <b>Caution.</b> The conditions are hidden on this page, but the file carries their labels: whoever opens it
-            elsewhere can read them.
-          </p>`
-        : null
-    }
-    <div class="words">
-      <button type="button" class="word main" data-part="save-file" @click=${() => void saveCopy(page)}>
-        save ${worksheet.title}.standfast.json
-      </button>
-    </div>`;
 }
 
 /** Data that arrived by drop or paste and could go to more than one place. */
