@@ -8,10 +8,10 @@ export function contextOf(given: Context['given'] = {}, more: Partial<Context> =
 
 /** An environment that runs jobs in place. */
 export function envOf(data: readonly StoredData[] = []): Env {
+  const env = { signal: new AbortController().signal, progress: () => undefined };
   return {
-    run: async (name, args) => (jobs[name] as (args: unknown) => never)(args),
-    signal: new AbortController().signal,
-    progress: () => undefined,
+    run: async (name, args) => (jobs[name] as (args: unknown, env: unknown) => never)(args, env),
+    ...env,
     data: (id) => data.find((each) => each.id === id),
     seed: 7,
   };
