@@ -28,7 +28,8 @@ export interface DrawnRow {
 export function rowsOf(value: Association, group: 'correlations' | 'slopes'): DrawnRow[] {
   const own = value.findings.flatMap((finding, index) => (finding.group === group ? [{ finding, index }] : []));
   const given = own.filter(({ finding }) => finding.interval !== null).map(({ finding }) => decimalsOf(finding));
-  const decimals = given.length > 0 ? Math.min(...given) : 2;
+  // One very wide interval must not round the others away.
+  const decimals = given.sort((a, b) => a - b)[given.length >> 1] ?? 2;
   const edges = own
     .flatMap(({ finding }) => [finding.estimate, ...(finding.interval ?? [])])
     .filter((each) => each !== null);

@@ -65,7 +65,8 @@ function cookFacts({ spec, pairs, diagnostics }: Association): CautionFacts | nu
 function named(participants: readonly string[], which: readonly number[], noun: string | null): string {
   const names = which.slice(0, NAMED).map((i) => participants[i]);
   const more = which.length - names.length;
-  return `${noun === null ? '' : `${noun} `}${names.join(', ')}${more > 0 ? ` and ${more} more` : ''}`;
+  const words = `${noun === null ? '' : `${noun} `}${names.join(', ')}${more > 0 ? ` and ${more} more` : ''}`;
+  return words.charAt(0).toUpperCase() + words.slice(1);
 }
 
 /** The smallest r that differs from 0 at .05 with so many pairs. */

@@ -123,10 +123,15 @@ export function methodTable(value: Association): TableOut {
 /** Leverage, Cook's distance and studentized residual of every participant. */
 export function diagnosticTable({ spec, pairs, diagnostics }: Association): TableOut {
   const { limits: at } = diagnostics;
-  const names = [spec.participant ?? 'row', 'row in the file', spec.x, spec.y, 'leverage', 'Cook', 'residual'];
   const number = (value: number | null, decimals: number) => (value === null ? '' : fixed(value, decimals));
+  const measures = [
+    `leverage (limit ${number(at.hat, 2)})`,
+    `Cook\u2019s distance (limit ${number(at.cook, 2)})`,
+    `studentized residual (limit ${at.studentized})`,
+  ];
+  const names = [spec.participant ?? 'row', 'row in the file', spec.x, spec.y, ...measures];
   return {
-    title: `points of the least-squares line (limits, common practice: leverage 2(k + 1)/n = ${fixed(at.hat, 2)}, Cook ${number(at.cook, 2)}, studentized residual ${at.studentized})`,
+    title: 'points of the least-squares line, with limits of common practice',
     columns: [...names, 'beyond'].map((name, i) => ({ name, numeric: i > 0 && i < names.length })),
     rows: diagnostics.pairs.map((each, i) => [
       pairs.participants[i] as string,

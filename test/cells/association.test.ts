@@ -93,7 +93,7 @@ describe('the association cell', () => {
     const notes = associationKind.notes?.(await computed, settings) ?? [];
     const text = (id: string) => notes.find((each) => each.id === id)?.text ?? '';
     expect(text('LEVER')).toMatch(
-      /^star 30, 11, 20, 34 lie far out on log_te \(leverage .*limit .* = \.09, common practice\)/,
+      /^Star 30, 11, 20, 34 lie far out on log_te \(leverage .*limit .* = \.09, common practice\)/,
     );
     expect(text('SKIP')).toMatch(/leave out 5 of 47 by projections and 7 of 47 by the MCD/);
     // sin(pi .256085 / 2) = .391
