@@ -120,6 +120,23 @@ const bridgeAlerts: Plan = {
         title: 'Voice alerts are acknowledged sooner than tones.',
       },
     },
+    // Trims of their own: turning the shared trim recomputes the planned comparison, its claim and the strip.
+    {
+      kind: 'comparison',
+      settings: {
+        ...comparisonOf('alert', 'voice', 'tone', 'trimmed-welch-james'),
+        trim: 20,
+        effect: { type: 'levels', factor: 'alert', pairs: 'holm' },
+      },
+    },
+    {
+      kind: 'comparison',
+      settings: {
+        ...comparisonOf('alert', 'voice', 'tone', 'trimmed-welch-james'),
+        trim: 20,
+        effect: { type: 'interaction', factors: ['alert', 'training'] },
+      },
+    },
   ],
 };
 
