@@ -1,7 +1,9 @@
 import type { Association } from '../src/analysis/association.ts';
+import type { Checks } from '../src/analysis/checks.ts';
 import type { ClaimValue } from '../src/analysis/claim.ts';
 import type { Result } from '../src/analysis/compare.ts';
 import type { Design } from '../src/analysis/design.ts';
+import type { Influence } from '../src/analysis/influence.ts';
 import type { Scores } from '../src/analysis/score.ts';
 import type { Sweep } from '../src/analysis/sweep.ts';
 import type { Table } from '../src/data/table.ts';
@@ -14,8 +16,10 @@ export interface Values {
   readonly table: Table;
   readonly design: Design;
   readonly scores: Scores;
+  readonly checks: Checks;
   readonly result: Result;
   readonly claim: ClaimValue;
+  readonly influence: Influence;
   readonly sweep: Sweep;
   readonly association: Association;
 }

@@ -5,6 +5,7 @@ import { dataKind } from './data/kind.ts';
 import { deriveKind } from './derive/kind.ts';
 import { designKind } from './design/kind.ts';
 import { exclusionKind } from './exclusion/kind.ts';
+import { influenceKind } from './influence/kind.ts';
 import type { Registry } from './kind.ts';
 import { noteKind } from './note/kind.ts';
 import { reshapeKind } from './reshape/kind.ts';
@@ -22,6 +23,7 @@ export const registry = {
   comparison: comparisonKind,
   association: associationKind,
   claim: claimKind,
+  influence: influenceKind,
   note: noteKind,
   standing: standingKind,
 } as const satisfies Registry;

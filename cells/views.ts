@@ -3,6 +3,7 @@ import { associationView } from './association/view.ts';
 import { claimView } from './claim/view.ts';
 import { comparisonView } from './comparison/view.ts';
 import { exclusionView } from './exclusion/view.ts';
+import { influenceView } from './influence/view.ts';
 import type { Computed, ViewContext } from './kind.ts';
 import { noteView } from './note/view.ts';
 import type { KindName } from './registry.ts';
@@ -26,6 +27,7 @@ export const views: Readonly<Record<KindName, View>> = {
   comparison: comparisonView,
   association: associationView,
   claim: claimView,
+  influence: influenceView,
   note: noteView,
   standing: standingView,
 };
