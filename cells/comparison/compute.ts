@@ -3,6 +3,7 @@ import { type AskedOmnibus, isOmnibus, sidesOf } from '../../src/analysis/asked.
 import type { ComparisonSpec, Result } from '../../src/analysis/compare.ts';
 import { peopleIn, takeLayout } from '../../src/analysis/layout.ts';
 import { fittingOmnibusRows } from '../../src/analysis/omnibus.ts';
+import { labelsOf, pipelineNumbers, rerunsOf, withPipeline } from '../../src/analysis/pipeline.ts';
 import { type Samples, samplesFor } from '../../src/analysis/samples.ts';
 import type { Scores } from '../../src/analysis/score.ts';
 import { withholdsTextbook } from '../../src/analysis/withhold.ts';
@@ -16,9 +17,36 @@ export async function computeComparison(settings: ComparisonSettings, scores: Sc
   const { effect } = comparison;
   const { rules, roles } = scores.design;
   const withheld = effect?.type !== 'value' && withholdsTextbook(rules, roles.rows);
-  return isOmnibus(effect)
-    ? computeLevels(comparison, effect, scores, withheld, env)
-    : computeSides(comparison, scores, withheld, env);
+  const result = isOmnibus(effect)
+    ? await computeLevels(comparison, effect, scores, withheld, env)
+    : await computeSides(comparison, scores, withheld, env);
+  return withheld ? rerunPlanned(result, env) : result;
+}
+
+/** Parts the re-runs are cut into, each a job. */
+const PARTS = 8;
+
+/** Gives the planned row p and interval from re-runs of the rules, where the comparison has labels to exchange. */
+async function rerunPlanned(result: Result, env: Env): Promise<Result> {
+  const { scores, comparison, findings, planned } = result;
+  const finding = findings[planned];
+  if (!finding || finding.estimate === null || finding.cautions.includes('R22')) return result;
+  if (labelsOf(scores.design, comparison) === null) return result;
+  const B = rerunsOf(comparison);
+  const edges = Array.from({ length: PARTS + 1 }, (_, i) => Math.floor((i * B) / PARTS));
+  let done = 0;
+  const run = async (purpose: 'relabel' | 'resample') => {
+    const parts = edges.slice(1).map(async (to, i) => {
+      const part = await env.run('pipeline', { scores, comparison, purpose, from: edges[i] ?? 0, to });
+      env.progress(++done / (2 * PARTS));
+      return part;
+    });
+    return Float64Array.from((await Promise.all(parts)).flatMap((part) => [...part]));
+  };
+  const [relabelled, resampled] = await Promise.all([run('relabel'), run('resample')]);
+  const numbers = pipelineNumbers(scores, comparison, relabelled, resampled);
+  const rerun = withPipeline(finding, numbers, B, 1 - comparison.alpha);
+  return { ...result, findings: findings.map((each, index) => (index === planned ? rerun : each)) };
 }
 
 async function computeSides(comparison: ComparisonSpec, scores: Scores, withheld: boolean, env: Env): Promise<Result> {

@@ -3,6 +3,7 @@ import { type CautionId, cautionText } from '../../src/analysis/cautions.ts';
 import type { Result } from '../../src/analysis/compare.ts';
 import { participantNoun } from '../../src/analysis/design.ts';
 import { groupsOfLevels, type Layout, takeLayout } from '../../src/analysis/layout.ts';
+import { rerunsOf } from '../../src/analysis/pipeline.ts';
 import { LEAST_FOR_P } from '../../src/analysis/row.ts';
 import { spreadOf } from '../../src/analysis/rows-omnibus-between.ts';
 import { standardDeviation } from '../../src/numerics/moments.ts';
@@ -59,6 +60,8 @@ function factsOf(id: CautionId, result: Result): Readonly<Record<string, string 
   switch (id) {
     case 'R2':
       return { condition: conditionWords(result), simulated: '' };
+    case 'R2P':
+      return { resamples: count(rerunsOf(comparison)), lost: '' };
     case 'R3':
       return { trim: comparison.trim };
     case 'R18':

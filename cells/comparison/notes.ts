@@ -2,6 +2,7 @@ import { type CautionId, cautionText, simulatedLevel } from '../../src/analysis/
 import type { Result } from '../../src/analysis/compare.ts';
 import { participantNoun } from '../../src/analysis/design.ts';
 import type { Finding } from '../../src/analysis/finding.ts';
+import { rerunsOf } from '../../src/analysis/pipeline.ts';
 import { LEAST_FOR_P } from '../../src/analysis/row.ts';
 import { spreadOf } from '../../src/analysis/rows-omnibus-between.ts';
 import { type Samples, samplesFor } from '../../src/analysis/samples.ts';
@@ -62,6 +63,8 @@ function factsOf(id: CautionId, result: Result): Readonly<Record<string, string 
   switch (id) {
     case 'R2':
       return { condition: comparison.factor, simulated: simulatedWords(result) };
+    case 'R2P':
+      return { resamples: count(rerunsOf(comparison)), lost: '' };
     case 'R3':
       return { trim: comparison.trim };
     case 'R5':

@@ -123,7 +123,9 @@ function specificationsOf(
   };
   const kept = keptKey(design, comparison);
   return choices(result, own).map(({ estimator, trim }) => {
-    const finding = compareRow(estimator, args, trim);
+    // Where a rule reads the condition, p and interval of the planned row come from re-runs of the whole chain.
+    const rerun = own && args.withheld ? result.findings[result.planned] : undefined;
+    const finding = rerun ?? compareRow(estimator, args, trim);
     const specification: Specification = {
       ruleLabel: extremeLabel(rules, unit),
       rules,

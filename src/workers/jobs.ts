@@ -1,12 +1,18 @@
 import { associateRows } from '../analysis/association.ts';
+import { type CheckOptions, checkAssumptions } from '../analysis/checks.ts';
+import type { CheckLayout } from '../analysis/checks-layout.ts';
 import type { ClaimSpec } from '../analysis/claim.ts';
 import type { Result } from '../analysis/compare.ts';
 import { compareSamples } from '../analysis/compare.ts';
 import { findInfluence, type InfluenceSpec } from '../analysis/influence.ts';
+import { countJoint } from '../analysis/joint.ts';
+import { type JointPlan, planJoint } from '../analysis/joint-plan.ts';
 import { compareLevels } from '../analysis/omnibus.ts';
+import { runPipeline } from '../analysis/pipeline.ts';
 import { sweepClaim } from '../analysis/sweep.ts';
 import { longWork } from './long-work.ts';
 import type { JobEnv } from './runner.ts';
+import { stepOf } from './step-of.ts';
 
 /** The table of jobs: pure functions by name, each given plain data that can be cloned to a worker. */
 export const jobs = {
@@ -14,13 +20,22 @@ export const jobs = {
   compare: compareSamples,
   /** Every row about several levels, the levels, and all pairs (analysis/omnibus.ts). */
   levels: compareLevels,
+  /** The planned row of a chain in some of its relabellings or resamples (analysis/pipeline.ts). */
+  pipeline: runPipeline,
   /** The strip's grid (analysis/sweep.ts). */
   sweep: (args: { readonly result: Result; readonly claim: ClaimSpec }) => sweepClaim(args.result, args.claim),
+  /** What relabelling a grid needs, and some of its relabellings (analysis/joint.ts). */
+  jointPlan: planJoint,
+  joint: (args: { readonly plan: JointPlan; readonly from: number; readonly to: number }, env: JobEnv) =>
+    countJoint(args, longWork(env)),
   /** Participants left out in turn, and the smallest set that changes the claim (analysis/influence.ts). */
   influence: (
     args: { readonly result: Result; readonly claim: ClaimSpec; readonly spec: InfluenceSpec },
     env: JobEnv,
   ) => findInfluence(args, longWork(env)),
+  /** What a comparison assumes, with what the checks could have shown (analysis/checks.ts). */
+  checks: (args: { readonly layout: CheckLayout; readonly options: CheckOptions }, env: JobEnv) =>
+    checkAssumptions(args.layout, args.options, stepOf(env)),
   /** Some rows of an association (analysis/association.ts). */
   associate: associateRows,
 };

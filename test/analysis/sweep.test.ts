@@ -3,6 +3,7 @@ import type { ClaimSpec } from '../../src/analysis/claim.ts';
 import { type ComparisonSpec, compareSamples, type Result } from '../../src/analysis/compare.ts';
 import { declareDesign, type Roles } from '../../src/analysis/design.ts';
 import { applyRules } from '../../src/analysis/exclusion.ts';
+import type { Finding } from '../../src/analysis/finding.ts';
 import type { Rule } from '../../src/analysis/rules.ts';
 import { takeSamples } from '../../src/analysis/samples.ts';
 import { scoreDesign } from '../../src/analysis/score.ts';
@@ -176,5 +177,14 @@ describe('sweepClaim', () => {
     const swept = sweepClaim(resultOf([], {}, few), claim);
     expect(swept.refused).toBe(swept.specifications.length);
     expect(swept.supported + swept.undecided + swept.contradicted).toBe(0);
+  });
+
+  it('theory: where a rule reads the condition the planned line has the p and interval of the comparison itself', () => {
+    const result = resultOf([{ ...extreme, scope: 'condition' } as Rule]);
+    const planned = { ...(result.findings[result.planned] as Finding), p: 0.03, interval: [-90, -5] as const };
+    const rerun = { ...result, findings: result.findings.map((each, i) => (i === result.planned ? planned : each)) };
+    const swept = sweepClaim(rerun, claim);
+    expect(swept.specifications[swept.planned]?.finding).toEqual(planned);
+    expect(swept.specifications[swept.planned]?.verdict).toBe('supported');
   });
 });

@@ -103,9 +103,14 @@ describe('the comparison cell', () => {
     };
     const r2 = async (n: number) => {
       const above = build(n);
-      const own = comparisonKind.defaults(contextOf({ scores: above }));
+      const own = { ...comparisonKind.defaults(contextOf({ scores: above })), resamples: 99 };
       const computed = await run<Result>(comparisonKind, own, { scores: above });
-      expect(computed.value.findings.every((finding) => finding.p === null)).toBe(true);
+      const planned = computed.value.findings[computed.value.planned];
+      expect(computed.value.findings.every((finding) => finding === planned || finding.p === null)).toBe(true);
+      // The planned row's p and interval come from the rules re-applied in relabellings and resamples.
+      expect(planned?.pHow).toBe('relabelling with the rules re-applied, B = 99: the rule sees the condition');
+      expect(planned?.interval?.[0]).toBeLessThan(planned?.estimate as number);
+      expect(comparisonKind.notes?.(computed, own).some((each) => each.id === 'R2P')).toBe(true);
       return comparisonKind.notes?.(computed, own).find((each) => each.id === 'R2')?.text ?? '';
     };
     expect(await r2(20)).toMatch(/\.075 of normal and \.204 of lognormal/);
