@@ -21,11 +21,12 @@ export function omnibusView(result: Result, context: ViewContext): TemplateResul
       <dl>
         ${result.findings.map((finding, index) => {
           const planned = index === result.planned;
-          const test = [statisticText(finding), shareText(finding)].filter((each) => each !== '').join('; ');
+          const share = shareText(finding);
           return html`<div class=${planned ? 'planned' : ''}>
             <dt>${planned ? html`<span aria-hidden="true">\u25a0 </span>` : null}${finding.label}${planned ? ' (planned)' : ''}</dt>
-            <dd>${test === '' ? (finding.reason ?? 'not given') : test}</dd>
+            <dd>${statisticText(finding) || (finding.reason ?? 'not given')}</dd>
             <dd>${finding.p === null ? '' : pValue(finding.p)}</dd>
+            ${share === '' ? null : html`<dd class="size">${share}</dd>`}
           </div>`;
         })}
       </dl>
