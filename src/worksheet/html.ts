@@ -1,6 +1,9 @@
 /** Id of the inert script element that holds the worksheet in a .standfast.html file. */
 export const BLOCK_ID = 'standfast-worksheet';
 
+/** Id of the part that can be read without the program. */
+export const READABLE_ID = 'standfast-readable';
+
 export type Found =
   | { readonly ok: true; readonly text: string; readonly from: number; readonly to: number }
   | { readonly ok: false; readonly sentence: string };
@@ -42,6 +45,21 @@ export function replaceWorksheetBlock(html: string, json: string): string {
   const found = findWorksheetBlock(html);
   if (!found.ok) throw new RangeError(`*html* must hold one worksheet block; got: ${found.sentence}`);
   return `${html.slice(0, found.from)}${escapeForScript(json)}${html.slice(found.to)}`;
+}
+
+/**
+ * A page with a worksheet in it: first the part that can be read without the program, then the worksheet.
+ *
+ * @param shell the page as built, with neither of the two in it
+ * @param readable HTML as `readablePart` writes it
+ * @param json the worksheet as JSON text
+ * @throws RangeError where the page has no end of its body
+ */
+export function pageWithWorksheet(shell: string, readable: string, json: string): string {
+  const end = shell.lastIndexOf('</body>');
+  if (end < 0) throw new RangeError('*shell* must hold </body>; got a page without it');
+  const block = `<script type="application/json" id="${BLOCK_ID}">${escapeForScript(json)}</script>`;
+  return `${shell.slice(0, end).trimEnd()}\n${readable}\n${block}\n</body>\n</html>\n`;
 }
 
 /** JSON text that can stand inside a script element: "<" can only be part of a string there. */

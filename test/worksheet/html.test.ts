@@ -1,5 +1,10 @@
 import { describe, expect, test } from 'vitest';
-import { escapeForScript, findWorksheetBlock, replaceWorksheetBlock } from '../../src/worksheet/html.ts';
+import {
+  escapeForScript,
+  findWorksheetBlock,
+  pageWithWorksheet,
+  replaceWorksheetBlock,
+} from '../../src/worksheet/html.ts';
 
 const json = '{"title":"a \\u003c/script> b"}';
 const block = `<script type="application/json" id="standfast-worksheet">${json}</script>`;
@@ -80,5 +85,19 @@ describe('replaceWorksheetBlock', () => {
 
   test('refuses: a page without a block', () => {
     expect(() => replaceWorksheetBlock(page(program), '{}')).toThrow('*html*');
+  });
+});
+
+describe('pageWithWorksheet', () => {
+  test('by hand: the readable part and then the block stand last in the body; the block is found again', () => {
+    const hostile = JSON.stringify({ title: '</script><script>alert(1)</script></body>' });
+    const html = pageWithWorksheet(page(program), '<noscript>read</noscript>', hostile);
+    expect(JSON.parse(textIn(html))).toEqual(JSON.parse(hostile));
+    expect(html.startsWith(`${page(program).split('</body>')[0]}\n<noscript>read</noscript>\n<script`)).toBe(true);
+    expect(html.endsWith('</script>\n</body>\n</html>\n')).toBe(true);
+  });
+
+  test('refuses: a page without an end of its body', () => {
+    expect(() => pageWithWorksheet('<p>', '', '{}')).toThrow('*shell*');
   });
 });
