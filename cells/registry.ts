@@ -1,11 +1,10 @@
-import { associationKind } from './association/kind.ts';
 import { claimKind } from './claim/kind.ts';
 import { comparisonKind } from './comparison/kind.ts';
 import { dataKind } from './data/kind.ts';
 import { deriveKind } from './derive/kind.ts';
 import { designKind } from './design/kind.ts';
 import { exclusionKind } from './exclusion/kind.ts';
-import { influenceKind } from './influence/kind.ts';
+import { guardAll } from './guard.ts';
 import type { Registry } from './kind.ts';
 import { noteKind } from './note/kind.ts';
 import { reshapeKind } from './reshape/kind.ts';
@@ -13,7 +12,7 @@ import { scoreKind } from './score/kind.ts';
 import { standingKind } from './standing/kind.ts';
 
 /** Every cell kind by its name in saved files, in the order of the "Then ..." list. */
-export const registry = {
+export const registry = guardAll({
   data: dataKind,
   reshape: reshapeKind,
   derive: deriveKind,
@@ -21,11 +20,9 @@ export const registry = {
   exclusion: exclusionKind,
   score: scoreKind,
   comparison: comparisonKind,
-  association: associationKind,
   claim: claimKind,
-  influence: influenceKind,
   note: noteKind,
   standing: standingKind,
-} as const satisfies Registry;
+} as const satisfies Registry);
 
 export type KindName = keyof typeof registry;

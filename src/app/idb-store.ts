@@ -16,6 +16,16 @@ function bare(block: DataBlock): DataBlock {
   return { ...block, columns: [] };
 }
 
+/** A browser that refuses a store may throw at once: that too is told at the first use. */
+async function opened(name: string): Promise<IDBPDatabase<Schema>> {
+  return openDB<Schema>(name, 1, {
+    upgrade(db) {
+      db.createObjectStore('worksheets', { keyPath: 'id' });
+      db.createObjectStore('blocks', { keyPath: ['worksheet', 'block.id'] });
+    },
+  });
+}
+
 /** Worksheets in the browser's own database, under their ids. */
 export class IdbStore implements Store {
   readonly #open: Promise<IDBPDatabase<Schema>>;
@@ -23,12 +33,7 @@ export class IdbStore implements Store {
   readonly #written = new Map<string, ReadonlySet<DataBlock>>();
 
   constructor(name = 'standfast') {
-    this.#open = openDB<Schema>(name, 1, {
-      upgrade(db) {
-        db.createObjectStore('worksheets', { keyPath: 'id' });
-        db.createObjectStore('blocks', { keyPath: ['worksheet', 'block.id'] });
-      },
-    });
+    this.#open = opened(name);
     // told at the first use; without this a blocked store would also be reported as unhandled
     this.#open.catch(() => undefined);
   }
@@ -45,6 +50,8 @@ export class IdbStore implements Store {
       if (known?.has(block)) continue;
       writes.push(transaction.objectStore('blocks').put({ worksheet: worksheet.id, block }));
     }
+    // the page may be gone before the browser would commit of itself
+    transaction.commit();
     await Promise.all([...writes, transaction.done]);
     this.#written.set(worksheet.id, new Set(worksheet.data));
   }
