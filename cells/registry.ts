@@ -1,3 +1,4 @@
+import { associationKind } from './association/kind.ts';
 import { claimKind } from './claim/kind.ts';
 import { comparisonKind } from './comparison/kind.ts';
 import { dataKind } from './data/kind.ts';
@@ -5,6 +6,7 @@ import { deriveKind } from './derive/kind.ts';
 import { designKind } from './design/kind.ts';
 import { exclusionKind } from './exclusion/kind.ts';
 import { guardAll } from './guard.ts';
+import { influenceKind } from './influence/kind.ts';
 import type { Registry } from './kind.ts';
 import { noteKind } from './note/kind.ts';
 import { reshapeKind } from './reshape/kind.ts';
@@ -20,7 +22,9 @@ export const registry = guardAll({
   exclusion: exclusionKind,
   score: scoreKind,
   comparison: comparisonKind,
+  association: associationKind,
   claim: claimKind,
+  influence: influenceKind,
   note: noteKind,
   standing: standingKind,
 } as const satisfies Registry);
