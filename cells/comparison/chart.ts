@@ -123,8 +123,10 @@ type Channel = Readonly<Record<string, unknown>>;
 
 function zeroLine(x: Channel): Channel {
   return {
+    // A layer of its own needs rows of its own: without any it would draw nothing.
+    data: { values: [{ zero: 0 }] },
     mark: { type: 'rule', strokeDash: [3, 3] },
-    encoding: { x: { ...x, datum: 0 }, color: { value: 'var(--soft)' } },
+    encoding: { x: { ...x, field: 'zero' }, color: { value: 'var(--soft)' } },
   };
 }
 
@@ -132,11 +134,6 @@ function marks(x: Channel, y: Channel, yOffset: number): Channel[] {
   const planned = 'datum.planned';
   const hold = { condition: { test: planned, value: 'var(--hold)' }, value: 'var(--soft)' };
   return [
-    {
-      data: { values: [{ zero: 0 }] },
-      mark: { type: 'rule', strokeDash: [3, 3] },
-      encoding: { x: { ...x, field: 'zero' }, color: { value: 'var(--soft)' } },
-    },
     {
       data: { name: 'ghost' },
       mark: { type: 'rule', strokeWidth: 9, opacity: 0.55, yOffset },
