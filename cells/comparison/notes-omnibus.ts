@@ -9,6 +9,7 @@ import { spreadOf } from '../../src/analysis/rows-omnibus-between.ts';
 import { standardDeviation } from '../../src/numerics/moments.ts';
 import type { Note } from '../kind.ts';
 import { count, counted, fixed, levelPercent } from '../numbers.ts';
+import { leftNotes } from './words.ts';
 
 /** What the margin says beside a comparison of several levels. */
 export function omnibusNotes(result: Result): Note[] {
@@ -29,11 +30,7 @@ export function omnibusNotes(result: Result): Note[] {
         : 'The rows say whether the levels differ at all, not which. A claim needs a comparison of two conditions, or of chosen levels.',
     },
   ];
-  if (result.left.length > 0) {
-    const named = result.left.slice(0, 3).map((each) => `${each.participant} (${each.why})`);
-    const more = result.left.length - named.length;
-    notes.push({ type: 'note', text: `Not compared: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.` });
-  }
+  notes.push(...leftNotes(result, noun));
   for (const id of applying(result)) {
     notes.push({ type: SAID.has(id) ? 'note' : 'caution', id, text: cautionText(id, factsOf(id, result)) });
   }

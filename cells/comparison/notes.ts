@@ -9,6 +9,7 @@ import { type Samples, samplesFor } from '../../src/analysis/samples.ts';
 import type { Note } from '../kind.ts';
 import { alphaText, count, counted, fixed, levelPercent, plural } from '../numbers.ts';
 import { omnibusNotes } from './notes-omnibus.ts';
+import { leftNotes } from './words.ts';
 
 /** What the margin says beside a comparison. */
 export function comparisonNotes(result: Result): Note[] {
@@ -24,11 +25,7 @@ export function comparisonNotes(result: Result): Note[] {
       text: `${first} minus ${second}${unit === '' ? '' : `, in ${unit}`}, with ${levelPercent(1 - result.comparison.alpha)} intervals; ${people}. The square row is the one the plan names.`,
     },
   ];
-  if (result.left.length > 0) {
-    const named = result.left.slice(0, 3).map((each) => `${noun} ${each.participant} (${each.why})`);
-    const more = result.left.length - named.length;
-    notes.push({ type: 'note', text: `Not compared: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.` });
-  }
+  notes.push(...leftNotes(result, noun));
   for (const id of applying(result)) {
     notes.push({ type: warns(id) ? 'caution' : 'note', id, text: cautionText(id, factsOf(id, result)) });
   }

@@ -1,6 +1,6 @@
 import type { Result } from '../../src/analysis/compare.ts';
 import type { EffectSize, Finding } from '../../src/analysis/finding.ts';
-import type { TableOut } from '../kind.ts';
+import type { Note, TableOut } from '../kind.ts';
 import { bounded, count, decimalsFor, degrees, fixed, levelPercent, limits, pValue } from '../numbers.ts';
 
 /** Decimals for a row: by its own interval, and never finer than the planned row's unit needs. */
@@ -155,4 +155,12 @@ export function effectTable(result: Result): TableOut {
     columns: ['row', 'effect size', 'interval by', 'how this is computed'].map((name) => ({ name, numeric: false })),
     rows,
   };
+}
+
+/** Participants with a score who could not enter, and why: the first three by name. */
+export function leftNotes(result: Result, noun: string): Note[] {
+  if (result.left.length === 0) return [];
+  const named = result.left.slice(0, 3).map((each) => `${noun} ${each.participant} (${each.why})`);
+  const more = result.left.length - named.length;
+  return [{ type: 'note', text: `Not compared: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}.` }];
 }
