@@ -5,8 +5,8 @@ import { pValue } from '../numbers.ts';
 import { decimalsOf, estimateText } from './words.ts';
 
 /** Widths in px of the label, estimate and p columns beside the plot; on narrow pages they stand above it. */
-const LABEL = 262;
-const NUMBERS = 236;
+const LABEL = 296;
+const NUMBERS = 212;
 const P = 68;
 const NARROW = 560;
 /** Room under the plot for the axis and its title. */

@@ -20,7 +20,7 @@ export const noteKind = defineKind<NoteSettings, Record<string, never>, null, { 
     {
       key: 'text',
       label: 'text of the note',
-      shown: settings.text.trim() === '' ? 'Write a note' : (settings.text.trim().split('\n')[0] ?? ''),
+      shown: settings.text.trim() === '' ? 'Write a note' : 'Note',
       filled: settings.text.trim() !== '',
       editor: { type: 'text', value: settings.text, long: true, set: (text) => ({ ...settings, text }) },
     },
