@@ -93,7 +93,9 @@ describe('RelabelledGroups', () => {
       return [...estimates, ...z];
     };
     const turned = run(labels.map((each) => 1 - each));
-    run(labels).forEach((value, i) => expect(Math.abs(value + (turned[i] as number))).toBeLessThan(1e-9));
+    run(labels).forEach((value, i) => {
+      expect(Math.abs(value + (turned[i] as number))).toBeLessThan(1e-9);
+    });
   });
 });
 

@@ -102,6 +102,8 @@ describe('RelabelledPairs', () => {
       return [...estimates, ...z];
     };
     const turned = run(1);
-    run(0).forEach((value, i) => expect(Math.abs(value + (turned[i] as number))).toBeLessThan(1e-9));
+    run(0).forEach((value, i) => {
+      expect(Math.abs(value + (turned[i] as number))).toBeLessThan(1e-9);
+    });
   });
 });
