@@ -1,6 +1,6 @@
 /** What a removal does: read off running sums where the planned row allows it, else by running the row or the chain. */
 import { type Remainder, remainder, type SortedSums, sortedSums } from '../numerics/removals.ts';
-import { tQuantileUpper } from '../numerics/tails/t.ts';
+import { criticalT } from '../numerics/simulation/critical-t.ts';
 import type { ClaimSpec } from './claim.ts';
 import type { Finding } from './finding.ts';
 import type { RemovalJudge } from './flip-set.ts';
@@ -120,18 +120,6 @@ function bounds(samples: Samples, spec: JudgeSpec, mostSets: number, mostTries: 
   return { mostSets, mostTries, largest: Math.max(0, all - (paired ? 1 : 2) * leastLeft(spec)) };
 }
 
-/** Critical values by whole degrees of freedom, and between them exactly only where it matters. */
-function criticalValues(tail: number, most: number) {
-  const table = Float64Array.from({ length: most + 2 }, (_, df) => (df === 0 ? NaN : tQuantileUpper(tail, df)));
-  return (df: number, t: number): number => {
-    const whole = Math.floor(df);
-    if (whole === df || whole < 1) return whole < 1 ? tQuantileUpper(tail, df) : (table[whole] as number);
-    const [above, below] = [table[whole] as number, table[whole + 1] as number];
-    const between = above + (df - whole) * (below - above);
-    return Math.abs(t - between) > above - below ? between : tQuantileUpper(tail, df);
-  };
-}
-
 function sumsJudge(chain: Chain, samples: Samples, spec: JudgeSpec): NamedJudge | null {
   const form = FROM_SUMS[chain.estimator.id];
   const { comparison } = chain.result;
@@ -144,7 +132,7 @@ function sumsJudge(chain: Chain, samples: Samples, spec: JudgeSpec): NamedJudge 
     namesInOrder(scores, side === 0 ? samples.xParticipants : samples.yParticipants),
   );
   const most = groups.reduce((all, scores) => all + scores.length, 0);
-  const critical = criticalValues(comparison.alpha / 2, most);
+  const critical = criticalT(comparison.alpha / 2, most);
   const full = plannedRow(chain, samples);
   const side = sideOf(full, spec.claim, comparison.first);
   const leave = fitter(form, groups.map(sortedSums), trim, leastLeft(spec));
