@@ -74,7 +74,7 @@ function factsOf(id: CautionId, result: Result): Readonly<Record<string, string 
       return spreadFacts(result);
     case 'R20':
       return {
-        rows: result.scope === 'value' ? 'The share' : 'The ratio and the probability',
+        rows: result.scope === 'value' ? 'Shares' : 'The ratio and the probability',
         unit: scores.design.roles.unit || 'means',
       };
     case 'R22':

@@ -6,12 +6,18 @@ import { type Level, type LevelMeasure, levelsOf } from './levels.ts';
 import type { LayoutShape, OmnibusRow } from './omnibus-row.ts';
 import { comparePairs, type Pairs } from './pairs.ts';
 import { FACTORIAL_ROWS } from './rows-factorial.ts';
+import { MIXED_ROWS } from './rows-mixed.ts';
 import { OMNIBUS_BETWEEN_ROWS } from './rows-omnibus-between.ts';
 import { OMNIBUS_WITHIN_ROWS } from './rows-omnibus-within.ts';
 import { withheldFinding } from './withhold.ts';
 
-/** THE LIST of rows about several levels, in the order shown; a new one is a line in one of the three files. */
-export const OMNIBUS_ROWS: readonly OmnibusRow[] = [...OMNIBUS_BETWEEN_ROWS, ...OMNIBUS_WITHIN_ROWS, ...FACTORIAL_ROWS];
+/** THE LIST of rows about several levels, in the order shown; a new one is a line in one of the four files. */
+export const OMNIBUS_ROWS: readonly OmnibusRow[] = [
+  ...OMNIBUS_BETWEEN_ROWS,
+  ...OMNIBUS_WITHIN_ROWS,
+  ...MIXED_ROWS,
+  ...FACTORIAL_ROWS,
+];
 
 /** The row of that id, or undefined. */
 export function omnibusRowOf(id: string): OmnibusRow | undefined {

@@ -81,8 +81,14 @@ export function comparePairs(layout: Layout, procedure: PairProcedure, context: 
     level: 1 - context.alpha,
     rows,
     ...(reason === undefined ? {} : { reason }),
-    method: found.method,
+    method: `${found.method}${aside(layout)}`,
   };
+}
+
+/** Other groups of the design are left out of account. */
+function aside(layout: Layout): string {
+  const others = layout.between.filter((each) => !each.inEffect).map((each) => each.factor);
+  return others.length === 0 ? '' : ` Participants are taken together whatever their ${others.join(' and ')}.`;
 }
 
 type Numbered = Omit<PairRow, 'first' | 'second'> & { readonly first: number; readonly second: number };

@@ -1,6 +1,5 @@
-/** Rows that keep every between factor of the design in the analysis: factorial, mixed, and Welch-James. */
+/** Rows that keep every between factor of the design in the analysis: factorial and Welch-James. */
 import { factorialAnova } from '../numerics/anova/factorial.ts';
-import { mixedAnova } from '../numerics/anova/mixed.ts';
 import { trimCount } from '../numerics/scores.ts';
 import { welchJames } from '../numerics/welch-james.ts';
 import { explainedShare } from './explained-share.ts';
@@ -15,14 +14,11 @@ import {
   partialEta,
 } from './omnibus-row.ts';
 import { SHARE_WORDS, unequalSpreads } from './rows-omnibus-between.ts';
-import { type Sphericity, sphericityWords, sphericNumbers } from './rows-omnibus-within.ts';
 
 const betweenFactors = (shape: LayoutShape) => shape.between.length + shape.otherBetween;
 const factorial = (shape: LayoutShape) => shape.within.length === 0 && betweenFactors(shape) > 1;
 /** Types II and III differ only where a larger interaction contains the effect. */
 const containedFactorial = (shape: LayoutShape) => factorial(shape) && shape.otherBetween > 0;
-const mixed = (shape: LayoutShape) => shape.within.length === 1 && betweenFactors(shape) === 1;
-const severalMixed = (shape: LayoutShape) => mixed(shape) && (shape.within[0] ?? 0) > 2;
 const johansen = (shape: LayoutShape) => factorial(shape) || shape.within.length > 0;
 
 export const FACTORIAL_ROWS: readonly OmnibusRow[] = [
@@ -41,30 +37,6 @@ export const FACTORIAL_ROWS: readonly OmnibusRow[] = [
     trims: false,
     fits: factorial,
     run: (layout, context) => factorialRow(layout, context, 3),
-  },
-  {
-    id: 'mixed',
-    name: 'means, groups kept apart, df uncorrected',
-    hint: 'mixed analysis of variance; sphericity taken for granted',
-    trims: false,
-    fits: mixed,
-    run: (layout, context) => mixedRow(layout, context, 'none'),
-  },
-  {
-    id: 'mixed-gg',
-    name: 'means, groups kept apart, df by Greenhouse\u2013Geisser',
-    hint: 'mixed analysis of variance, df corrected for sphericity',
-    trims: false,
-    fits: severalMixed,
-    run: (layout, context) => mixedRow(layout, context, 'gg'),
-  },
-  {
-    id: 'mixed-hf',
-    name: 'means, groups kept apart, df by Huynh\u2013Feldt',
-    hint: 'mixed analysis of variance, df corrected for sphericity',
-    trims: false,
-    fits: severalMixed,
-    run: (layout, context) => mixedRow(layout, context, 'hf'),
   },
   {
     id: 'welch-james',
@@ -127,25 +99,6 @@ function typeWords(type: 2 | 3, agree: boolean): string {
   return type === 2
     ? 'Sums of squares of type II: what the effect adds to all effects that do not contain it; groups weigh by their n.'
     : 'Sums of squares of type III: what the effect adds to all others, with effects that add up to 0; every group weighs alike.';
-}
-
-function mixedRow(layout: Layout, context: OmnibusContext, correction: Sphericity): Finding {
-  const anova = mixedAnova(layout.groups.map((group) => group.scores));
-  const interaction = layout.between.some((each) => each.inEffect);
-  const effect = interaction ? anova.interaction : anova.within;
-  const [group] = layout.between;
-  const corrected = { none: 'df uncorrected', gg: 'Greenhouse\u2013Geisser df', hf: 'Huynh\u2013Feldt df' }[correction];
-  return makeOmnibusRow(
-    layout,
-    context,
-    {
-      estimator: correction === 'none' ? 'mixed' : `mixed-${correction}`,
-      label: `means, ${group?.factor ?? 'groups'} kept apart, ${corrected}`,
-      share: 'partial \u03b7\u00b2',
-      method: `Mixed analysis of variance (Winer 1971): participants within ${group?.factor ?? 'groups'}, error from the covariances pooled over groups${interaction ? '' : '; type III, every group alike'}. ${sphericityWords(effect, anova.mauchly, correction)} Effect size: partial \u03b7\u00b2 with the noncentral F interval of Steiger 2004 at 1 \u2212 2 \u03b1 on the same df.`,
-    },
-    sphericNumbers(effect, correction, context),
-  );
 }
 
 function welchJamesRow(layout: Layout, context: OmnibusContext, estimator: string): Finding {
