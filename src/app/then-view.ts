@@ -11,7 +11,9 @@ export function thenView(page: Page, after: string | null, open: boolean, last: 
   const id = after ?? '';
   const toggle = (): void => {
     page.show({ panel: open ? null : { cellId: id, part: 'then' }, blank: null });
-    if (!open) focusOn('.offers button');
+    if (open) return;
+    focusOn('.offers button');
+    showWhole();
   };
   return html`<div class=${last ? 'then last' : 'then'}>
     <button
@@ -27,6 +29,13 @@ export function thenView(page: Page, after: string | null, open: boolean, last: 
     </button>
     ${open ? list(page, after) : nothing}
   </div>`;
+}
+
+/** Brings the whole list above the foot, once it is drawn. */
+function showWhole(): void {
+  requestAnimationFrame(() =>
+    requestAnimationFrame(() => document.querySelector('.offers')?.scrollIntoView({ block: 'nearest' })),
+  );
 }
 
 function list(page: Page, after: string | null): TemplateResult {
