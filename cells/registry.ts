@@ -7,6 +7,7 @@ import { designKind } from './design/kind.ts';
 import { exclusionKind } from './exclusion/kind.ts';
 import { guardAll } from './guard.ts';
 import { influenceKind } from './influence/kind.ts';
+import { jointKind } from './joint/kind.ts';
 import type { Registry } from './kind.ts';
 import { noteKind } from './note/kind.ts';
 import { reshapeKind } from './reshape/kind.ts';
@@ -27,6 +28,7 @@ export const registry = guardAll({
   influence: influenceKind,
   note: noteKind,
   standing: standingKind,
+  joint: jointKind,
 } as const satisfies Registry);
 
 export type KindName = keyof typeof registry;

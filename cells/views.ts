@@ -30,4 +30,5 @@ export const views: Readonly<Record<KindName, View>> = {
   influence: influenceView,
   note: noteView,
   standing: standingView,
+  joint: plain,
 };

@@ -1,6 +1,6 @@
 import type { Context, Kind, Registry, Settings, ValueType } from '../../cells/kind.ts';
 import type { Cell, DataBlock, SharedNumber, Worksheet } from '../worksheet/format.ts';
-import { cellOf, fittingAbove, nearestFrom, passPort, rewired, STANDING, sharedIn } from './wiring.ts';
+import { cellOf, fittingAbove, isHidden, JOINT, nearestFrom, passPort, rewired, STANDING, sharedIn } from './wiring.ts';
 
 /** Every edit is pure: it gives the record the worksheet would become; the same record where nothing changes. */
 
@@ -55,27 +55,48 @@ function insert(worksheet: Worksheet, registry: Registry, position: number, cell
   return withStanding(withCells(worksheet, fillOpenPorts(cells, registry, position)), registry);
 }
 
-/** Keeps the hidden standing cell last and reading a claim that is there; adds it with the first claim. */
+/** Keeps the hidden cells last, the standing one reading a claim that is there; adds them with the first claim. */
 export function withStanding(worksheet: Worksheet, registry: Registry): Worksheet {
   const kind = registry[STANDING];
   if (kind === undefined) return worksheet;
-  const others = worksheet.cells.filter((cell) => cell.kind !== STANDING);
+  const others = worksheet.cells.filter((cell) => !isHidden(cell.kind));
   const was = worksheet.cells.find((cell) => cell.kind === STANDING);
   const from = nearestFrom(withCells(worksheet, others), registry, others.length, kind);
   if (was === undefined && from === null) return worksheet;
   if (was === undefined) {
     const settings = kind.defaults({ shared: worksheet.shared, given: {}, data: worksheet.data });
     const cell = { id: nextId(worksheet), kind: STANDING, version: kind.version, settings, from: from ?? {} };
-    return withCells(worksheet, [...others, cell]);
+    return withJoint(worksheet, registry, others, cell);
   }
   const reads = Object.values(was.from).every((id) => others.some((cell) => cell.id === id));
   const whole = reads && Object.keys(kind.takes).every((port) => was.from[port] !== undefined);
-  if (whole && worksheet.cells.at(-1) === was) return worksheet;
-  return withCells(worksheet, [...others, whole ? was : { ...was, from: from ?? {} }]);
+  return withJoint(worksheet, registry, others, whole ? was : { ...was, from: from ?? {} });
+}
+
+/** The cells with the standing one after them, and last the joint inference over what that one gives. */
+function withJoint(worksheet: Worksheet, registry: Registry, others: readonly Cell[], standing: Cell): Worksheet {
+  const kind = registry[JOINT];
+  const was = worksheet.cells.find((cell) => cell.kind === JOINT);
+  const cells = [...others, standing];
+  if (kind !== undefined) {
+    const from = { ...standing.from, sweep: standing.id };
+    const settings = () => kind.defaults({ shared: worksheet.shared, given: {}, data: worksheet.data });
+    const made = () => ({
+      id: nextId(withCells(worksheet, cells)),
+      kind: JOINT,
+      version: kind.version,
+      settings: settings(),
+      from,
+    });
+    const same = was !== undefined && Object.entries(from).every(([port, id]) => was.from[port] === id);
+    cells.push(was === undefined ? made() : same ? was : { ...was, from });
+  } else if (was !== undefined) cells.push(was);
+  const unchanged = cells.length === worksheet.cells.length && cells.every((cell, i) => cell === worksheet.cells[i]);
+  return unchanged ? worksheet : withCells(worksheet, cells);
 }
 
 function positionAfter(worksheet: Worksheet, after: string | null): number {
-  const visible = worksheet.cells.filter((cell) => cell.kind !== STANDING).length;
+  const visible = worksheet.cells.filter((cell) => !isHidden(cell.kind)).length;
   if (after === null) return visible;
   const at = worksheet.cells.findIndex((cell) => cell.id === after);
   return at < 0 ? visible : Math.min(at + 1, visible);

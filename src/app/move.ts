@@ -1,6 +1,6 @@
 import type { Registry } from '../../cells/kind.ts';
 import type { Cell, Worksheet } from '../worksheet/format.ts';
-import { passPort, readersOf, rewired, STANDING } from './wiring.ts';
+import { isHidden, passPort, readersOf, rewired } from './wiring.ts';
 
 function sourceOf(registry: Registry, cell: Cell): string | undefined {
   const port = passPort(registry[cell.kind]);
@@ -42,7 +42,7 @@ function steppedOver(worksheet: Worksheet, registry: Registry, upper: Cell, lowe
  * rewired so that the flow follows the order on the page. Null where it cannot move there.
  */
 export function move(worksheet: Worksheet, registry: Registry, id: string, by: -1 | 1): Worksheet | null {
-  const visible = worksheet.cells.filter((cell) => cell.kind !== STANDING);
+  const visible = worksheet.cells.filter((cell) => !isHidden(cell.kind));
   const at = visible.findIndex((cell) => cell.id === id);
   const other = visible[at + by];
   const cell = visible[at];

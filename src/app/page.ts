@@ -7,7 +7,7 @@ import type { WorksheetDocument } from './document.ts';
 import { setSettings } from './edits.ts';
 import type { PageEngine } from './page-engine.ts';
 import type { Autosave, SaveState, Store } from './storage.ts';
-import { cellOf, STANDING } from './wiring.ts';
+import { cellOf, isHidden } from './wiring.ts';
 
 export type Views = {
   readonly [kind: string]: (computed: Computed<never, never>, context: ViewContext) => TemplateResult | typeof nothing;
@@ -109,9 +109,9 @@ export class Page {
     this.tell();
   }
 
-  /** Names of the cells that recomputed since the last edit, without the hidden one. */
+  /** Names of the cells that recomputed since the last edit, without the hidden ones. */
   recomputedTitles(): readonly string[] {
-    const cells = this.worksheet.cells.filter((cell) => cell.kind !== STANDING && this.recomputed.has(cell.id));
+    const cells = this.worksheet.cells.filter((cell) => !isHidden(cell.kind) && this.recomputed.has(cell.id));
     return cells.map((cell) => this.parts.registry[cell.kind]?.title(cell.settings) ?? cell.kind);
   }
 

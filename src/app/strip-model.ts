@@ -5,7 +5,7 @@ import { findingText } from './finding-text.ts';
 import { claimOf, plannedOf } from './hold-reference.ts';
 import type { Page } from './page.ts';
 import type { StripModel } from './strip-view.ts';
-import { cellOf, STANDING } from './wiring.ts';
+import { cellOf, JOINT, STANDING } from './wiring.ts';
 
 const NO_CLAIM = 'No claim yet: say what the comparison shows, and this strip tests whether it stands fast.';
 
@@ -38,6 +38,7 @@ export function stripModel(page: Page, width: number): StripModel {
     blind: worksheet.opening.state === 'blind',
     state,
     say: shown && computed !== undefined && kind !== undefined ? kind.say(computed, settings) : null,
+    joint: jointOf(page),
     waitingFor:
       state === null
         ? ''
@@ -58,6 +59,18 @@ export function stripModel(page: Page, width: number): StripModel {
             sweep: (computed?.value as Sweep | undefined) ?? null,
           },
   };
+}
+
+/** What the joint inference over the strip says, or how far it is; null where it is hidden or has nothing to wait for. */
+function jointOf(page: Page): StripModel['joint'] {
+  const cell = page.worksheet.cells.find((each) => each.kind === JOINT);
+  const kind = page.parts.registry[JOINT];
+  if (cell === undefined || kind === undefined) return null;
+  const state = page.parts.engine.state(cell.id);
+  if (state.status === 'fresh')
+    return { say: kind.say(state.computed, page.parts.engine.settings(cell.id)), progress: 1 };
+  if (state.status === 'failed') return { say: `no joint p: ${state.sentence}`, progress: 1 };
+  return state.status === 'computing' ? { say: null, progress: state.progress } : null;
 }
 
 /** The held reference as views get it; the record itself, so that its identity tells whether it changed. */

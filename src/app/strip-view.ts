@@ -19,6 +19,8 @@ export interface StripModel {
   readonly state: CellState | null;
   readonly context: ViewContext | null;
   readonly say: string | null;
+  /** The joint inference over the strip: what it says, or the share done of it; null where there is none. */
+  readonly joint: { readonly say: string | null; readonly progress: number } | null;
   readonly waitingFor: string;
 }
 
@@ -91,13 +93,24 @@ export class StripView extends LightElement {
     return html`<progress class="strip-progress" max="1" .value=${state.progress} aria-label="analyses run"></progress>`;
   }
 
+  /** The counts are there first; the joint p follows. */
+  #joint(): TemplateResult | typeof nothing {
+    const { joint } = this.model;
+    if (joint === null) return nothing;
+    if (joint.say !== null) return html`<span class="joint" data-part="strip-joint">${joint.say}</span>`;
+    return html`<span class="joint quiet" data-part="strip-joint">
+      relabelling \u2026
+      <progress max="1" .value=${joint.progress} aria-label="relabellings run"></progress>
+    </span>`;
+  }
+
   #counts(): TemplateResult | string | typeof nothing {
     const { state, say, waitingFor, blind } = this.model;
     if (state === null) return nothing;
     if (blind) return html`No analysis has looked at the conditions yet.`;
     if (state.status === 'failed') return html`<span class="failed">${state.sentence}</span>`;
     if (state.status === 'waiting') return `Waiting for ${waitingFor}.`;
-    if (say !== null) return verdicts(say);
+    if (say !== null) return html`${verdicts(say)}${this.#joint()}`;
     return state.status === 'computing' ? 'Running every defensible analysis \u2026' : nothing;
   }
 }

@@ -1,8 +1,14 @@
 import type { Kind, Registry, ValueType } from '../../cells/kind.ts';
 import type { Cell, Worksheet } from '../worksheet/format.ts';
 
-/** The kind of the hidden cell behind the standing strip; it is never shown among the cells. */
+/** The kinds of the hidden cells behind the standing strip: its analyses, and the joint inference over them. */
 export const STANDING = 'standing';
+export const JOINT = 'joint';
+
+/** Whether a cell of this kind is never shown among the cells. */
+export function isHidden(kind: string): boolean {
+  return kind === STANDING || kind === JOINT;
+}
 
 /** The port through which a kind hands on what it reads (its only port, of the type it gives), or null. */
 export function passPort(kind: Kind | undefined): string | null {
@@ -14,7 +20,7 @@ export function passPort(kind: Kind | undefined): string | null {
 
 /** The cells a reader sees, in order. */
 export function visibleCells(worksheet: Worksheet): readonly Cell[] {
-  return worksheet.cells.filter((cell) => cell.kind !== STANDING);
+  return worksheet.cells.filter((cell) => !isHidden(cell.kind));
 }
 
 export function cellOf(worksheet: Worksheet, id: string): Cell | undefined {

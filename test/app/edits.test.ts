@@ -58,6 +58,29 @@ describe('adding a cell', () => {
     expect(add(claimed, null, 'note')!.worksheet.cells.at(-1)?.kind).toBe('standing');
   });
 
+  it('by hand: the joint inference stands behind the strip and reads the claim and the strip\u2019s own cell', () => {
+    const joint = {
+      ...registry.standing!,
+      name: 'joint',
+      takes: { claim: 'claim', sweep: 'sweep' },
+      gives: null,
+    } as const;
+    const sensitivity = { ...registry.standing!, name: 'sensitivity', offer: 'Repeat' };
+    const both = { ...registry, joint, sensitivity };
+    const put = (worksheet: Worksheet, kind: string) =>
+      edits.addAfter(worksheet, both, null, (both as typeof registry)[kind]!, context)!.worksheet;
+    const bare = plainWorksheet('c1 data', 'c2 design table=c1', 'c3 score design=c2', 'c4 comparison scores=c3');
+    const claimed = put(bare, 'claim');
+    const hidden = ['c6 standing claim=c5', 'c7 joint claim=c5 sweep=c6'];
+    expect(wiring(claimed).slice(4)).toEqual(['c5 claim result=c4', ...hidden]);
+    // another cell that gives a sweep does not take the strip's place
+    expect(wiring(put(claimed, 'sensitivity')).slice(5)).toEqual(['c8 sensitivity claim=c5', ...hidden]);
+    expect(edits.withStanding(claimed, both)).toBe(claimed);
+    // a worksheet saved before there was a joint inference gets it with the next edit of its cells
+    expect(wiring(edits.withStanding(chain, both)).slice(5)).toEqual(hidden);
+    expect(wiring(edits.remove(claimed, both, 'c5')).slice(4)).toEqual(['c6 standing', 'c7 joint sweep=c6']);
+  });
+
   it('by hand: cells below whose port found nothing read the new cell', () => {
     const broken = edits.remove(chain, registry, 'c3');
     expect(wiring(broken)).toContain('c4 comparison');

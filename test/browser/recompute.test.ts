@@ -16,6 +16,8 @@ async function demoCells(page: Page) {
     comparison: id('comparison'),
     claim: id('claim'),
     standing: id('standing'),
+    // hidden like the strip's own cell: the joint p that follows its counts
+    joint: id('joint'),
   };
 }
 
@@ -41,8 +43,8 @@ async function typeShared(page: Page, shared: string, text: string): Promise<voi
 describe('a change recomputes what depends on it and nothing else', () => {
   test('theory: the shared trim, by its ruler and by typing', async () => {
     const { page } = await harness.open();
-    const { comparison, claim, standing } = await demoCells(page);
-    const planned = once(comparison, claim, standing);
+    const { comparison, claim, standing, joint } = await demoCells(page);
+    const planned = once(comparison, claim, standing, joint);
     expect(await computedBy(page, () => rulerKey(page, 'trim', 'ArrowLeft'))).toEqual(planned);
     expect(await page.locator('[data-shared="trim"] [data-part="shared-value"]').textContent()).toBe('19 %');
     expect(await blankIn(cellsOf(page, 'comparison'), 'trim').textContent()).toBe('19 %');
@@ -53,8 +55,8 @@ describe('a change recomputes what depends on it and nothing else', () => {
 
   test('theory: the shared cutoff, and one that sets the same rows aside', async () => {
     const { page } = await harness.open();
-    const { cutoff, score, comparison, claim, standing } = await demoCells(page);
-    const all = once(cutoff, score, comparison, claim, standing);
+    const { cutoff, score, comparison, claim, standing, joint } = await demoCells(page);
+    const all = once(cutoff, score, comparison, claim, standing, joint);
     // below "none" lies the largest cutoff of the ruler
     expect(await computedBy(page, () => rulerKey(page, 'cutoff', 'ArrowLeft'))).toEqual(all);
     expect(await computedBy(page, () => typeShared(page, 'cutoff', '3'))).toEqual(all);
