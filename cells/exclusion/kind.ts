@@ -1,11 +1,13 @@
-import { type Design, fullCondition, participantNoun } from '../../src/analysis/design.ts';
-import { applyRule } from '../../src/analysis/exclusion.ts';
+import { type Design, participantNoun } from '../../src/analysis/design.ts';
+import { applyFlagged, applyRule, extremeScores } from '../../src/analysis/exclusion.ts';
 import type { Flagged } from '../../src/analysis/flagging.ts';
-import type { Rule } from '../../src/analysis/rules.ts';
-import { defineKind, type Num, numberOf, type TableOut } from '../kind.ts';
-import { count, counted, fixed, percent, plural } from '../numbers.ts';
+import { OWN_CUTOFF, type Rule } from '../../src/analysis/rules.ts';
+import { defineKind, type Num, numberOf } from '../kind.ts';
+import { count, counted, plural } from '../numbers.ts';
+import { WITHIN } from './distances.ts';
 import { exclusionNotes } from './notes.ts';
 import { type ExclusionSettings, exclusionSentence } from './sentence.ts';
+import { countTable, listTable } from './tables.ts';
 
 /** What the exclusion cell shows of its rule; the cells below read only what is kept. */
 export interface ExclusionDetail {
@@ -39,8 +41,16 @@ export const exclusionKind = defineKind<ExclusionSettings, { readonly design: 'd
     least: 70,
   }),
   check: (settings) => checkSettings(settings),
-  compute(settings, { design }) {
+  compute(settings, { design }, env) {
     const rule = ruleOf(settings, design);
+    if (rule.rule === 'extreme' && rule.measure === 'MCD') {
+      // The search for the subset takes long enough to be felt: it is left to a worker.
+      const marks = env.run('flagExtreme', { scores: extremeScores(design, rule), rule });
+      return marks.then((flagged) => ({
+        value: applyFlagged(design, rule, flagged).design,
+        detail: { rule, flagged, before: design },
+      }));
+    }
     const applied = applyRule(design, rule);
     return { value: applied.design, detail: { rule, flagged: applied.flagged, before: design } };
   },
@@ -104,9 +114,8 @@ function sameMarks(a: Uint8Array, b: Uint8Array): boolean {
 function sameReading(a: Rule | undefined, b: Rule | undefined): boolean {
   if (a?.rule !== b?.rule) return false;
   if (a?.rule !== 'extreme' || b?.rule !== 'extreme') return true;
-  return (
-    a.scope === b.scope && a.on === b.on && a.column === b.column && a.measure === b.measure && a.sides === b.sides
-  );
+  const same = (['scope', 'on', 'column', 'measure', 'sides', 'repeated'] as const).every((key) => a[key] === b[key]);
+  return same && (a.columns ?? []).join('\n') === (b.columns ?? []).join('\n');
 }
 
 function checkSettings(settings: ExclusionSettings): string[] {
@@ -116,11 +125,30 @@ function checkSettings(settings: ExclusionSettings): string[] {
   }
   if (settings.how === 'kept-share')
     return settings.what === 'trial' ? ['A share of kept trials judges participants.'] : [];
-  if (settings.how === 'beyond') return [];
+  if (settings.how === 'together') return checkTogether(settings);
+  if (settings.how === 'beyond') return checkBeyond(settings);
   if (isEmpty(settings.limit)) return ['Say the limit: a number in the column\u2019s unit.'];
   return settings.reason.trim() === ''
     ? ['Give the reason for the limit, for example that faster presses are anticipations.']
     : [];
+}
+
+function checkTogether(settings: ExclusionSettings): string[] {
+  if (settings.what === 'trial') return ['Several columns at once judge participants.'];
+  return (settings.columns ?? []).length < 2 ? ['Say which columns are judged together: two or more.'] : [];
+}
+
+function checkBeyond({ measure, sides, repeated }: ExclusionSettings): string[] {
+  const moving = measure === 'moving' || measure === 'recursive';
+  if (moving && repeated === true) {
+    return [
+      'The moving criterion is made for one pass, and its recursive form repeats by itself: choose "further than".',
+    ];
+  }
+  if (measure === 'recursive' && sides !== 'both') {
+    return ['The recursive moving criterion tests both ends: choose "further than", or the moving criterion.'];
+  }
+  return [];
 }
 
 function isEmpty(value: Num): boolean {
@@ -132,15 +160,31 @@ function ruleOf(settings: ExclusionSettings, design: Design): Rule {
   const column = settings.column === '' ? design.roles.outcome : settings.column;
   if (settings.what === 'named') return { rule: 'named', participants: settings.participants, reason: settings.reason };
   if (settings.how === 'kept-share') return { rule: 'kept-share', least: numberOf(settings.least) };
+  if (settings.how === 'together') {
+    const columns = settings.columns ?? [];
+    const cutoff = settings.within === undefined ? WITHIN : numberOf(settings.within);
+    const first = columns[0] ?? column;
+    return {
+      rule: 'extreme',
+      on: 'participant',
+      column: first,
+      columns,
+      measure: 'MCD',
+      cutoff,
+      scope: 'pooled',
+      sides: 'both',
+    };
+  }
   if (settings.how === 'beyond') {
     return {
       rule: 'extreme',
       on: settings.what,
       column,
       measure: settings.measure,
-      cutoff: numberOf(settings.cutoff),
+      cutoff: OWN_CUTOFF.has(settings.measure) ? 1 : numberOf(settings.cutoff),
       scope: settings.scope,
       sides: settings.sides,
+      ...(settings.repeated === true ? { repeated: true } : {}),
     };
   }
   return {
@@ -150,62 +194,5 @@ function ruleOf(settings: ExclusionSettings, design: Design): Rule {
     side: settings.how,
     limit: numberOf(settings.limit),
     reason: settings.reason,
-  };
-}
-
-/** Rows read and set aside under each combination of conditions. */
-function countTable(design: Design, detail: ExclusionDetail): TableOut {
-  const condition = fullCondition(design);
-  const step = new Set(design.steps.at(-1)?.rows ?? []);
-  const labels = new Map<number, { label: string; before: number; aside: number }>();
-  for (let row = 0; row < condition.length; row++) {
-    const code = condition[row] as number;
-    if (code < 0 || detail.before.kept[row] !== 1) continue;
-    const entry = labels.get(code) ?? { label: conditionLabel(design, row), before: 0, aside: 0 };
-    entry.before++;
-    if (step.has(row)) entry.aside++;
-    labels.set(code, entry);
-  }
-  const rows = [...labels.entries()].sort((a, b) => a[0] - b[0]).map(([, entry]) => entry);
-  return {
-    title: 'set aside by condition',
-    columns: [
-      { name: design.factors.map((factor) => factor.name).join(', '), numeric: false },
-      { name: 'before', numeric: true },
-      { name: 'set aside', numeric: true },
-      { name: 'share', numeric: true },
-    ],
-    rows: rows.map((each) => [
-      each.label,
-      count(each.before),
-      count(each.aside),
-      percent(each.aside / Math.max(1, each.before)),
-    ]),
-    raw: rows.map((each) => [each.label, each.before, each.aside, each.aside / Math.max(1, each.before)]),
-  };
-}
-
-function conditionLabel(design: Design, row: number): string {
-  return design.factors.map((factor) => factor.levels[factor.codes[row] as number] ?? '').join(', ');
-}
-
-/** Every row the rule set aside. */
-function listTable(design: Design): TableOut {
-  const rows = Array.from(design.steps.at(-1)?.rows ?? []);
-  const outcome = design.roles;
-  return {
-    title: 'rows set aside',
-    columns: [
-      { name: 'row in the file', numeric: true },
-      { name: outcome.participant, numeric: false },
-      ...design.factors.map((factor) => ({ name: factor.name, numeric: false })),
-      { name: outcome.outcome + (outcome.unit === '' ? '' : ` (${outcome.unit})`), numeric: true },
-    ],
-    rows: rows.map((row) => [
-      String(design.table.origin[row]),
-      design.participants[design.participant[row] as number] ?? '',
-      ...design.factors.map((factor) => factor.levels[factor.codes[row] as number] ?? ''),
-      fixed(design.outcome[row] as number, Number.isInteger(design.outcome[row]) ? 0 : 2),
-    ]),
   };
 }

@@ -2,7 +2,7 @@ import { cautionText } from '../../src/analysis/cautions.ts';
 import { type Design, fullCondition, participantNoun } from '../../src/analysis/design.ts';
 import { type ExtremeRule, readsCondition } from '../../src/analysis/rules.ts';
 import type { Note } from '../kind.ts';
-import { count, fixed, percent } from '../numbers.ts';
+import { count, counted, fixed, percent } from '../numbers.ts';
 import type { ExclusionDetail } from './kind.ts';
 
 /** What the margin says beside an exclusion rule. */
@@ -22,7 +22,7 @@ export function exclusionNotes(design: Design, detail: ExclusionDetail): Note[] 
 function extremeNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule, factors: string): Note[] {
   const notes: Note[] = [];
   const noun = participantNoun(design.roles);
-  const where = rule.scope === 'participant' ? ` within a ${noun}` : '';
+  const where = rule.scope === 'participant' ? ` within one ${noun}` : '';
   if (rule.cutoff === null) {
     notes.push({
       type: 'note',
@@ -39,18 +39,27 @@ function extremeNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule
       text: cautionText('R2T', { condition: factors, counts: countWords(detail) }),
     });
   }
-  const limits = detail.flagged.limits;
+  notes.push(...spreadNotes(design, detail, rule, where), ...procedureNotes(design, detail, rule));
+  return notes;
+}
+
+/** Where a spread is zero, unsteady, or too wide for the rule ever to set anything aside. */
+function spreadNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule, where: string): Note[] {
+  const notes: Note[] = [];
+  const { limits } = detail.flagged;
   const flat = limits.filter((each) => each.reason?.startsWith('more than half'));
   if (flat.length > 0) {
-    const names =
-      rule.scope === 'participant'
-        ? `For ${flat
-            .slice(0, 3)
-            .map((each) => design.participants[each.scope])
-            .join(', ')}${flat.length > 3 ? ` and ${flat.length - 3} more` : ''} `
-        : 'Here ';
-    notes.push({ type: 'caution', id: 'R4', text: cautionText('R4', { where: names, measure: rule.measure }) });
+    const named = flat.slice(0, 3).map((each) => design.participants[each.scope]);
+    const more = flat.length > 3 ? ` and ${flat.length - 3} more` : '';
+    const names = rule.scope === 'participant' && rule.on === 'trial' ? `For ${named.join(', ')}${more} ` : 'Here ';
+    const side = flat.every((each) => each.reason?.endsWith('equal to it')) ? 'on one side of the median ' : '';
+    notes.push({
+      type: 'caution',
+      id: 'R4',
+      text: cautionText('R4', { where: names + side, measure: SPREADS[rule.measure] }),
+    });
   }
+  if (limits.length === 0 || rule.cutoff === null) return notes;
   const most = Math.max(0, ...limits.map((each) => each.n));
   const least = Math.min(...limits.map((each) => each.n));
   const largest = (most - 1) / Math.sqrt(Math.max(1, most));
@@ -64,7 +73,53 @@ function extremeNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule
   if (rule.measure === 'MAD' && least < 10) {
     notes.push({ type: 'caution', id: 'R12', text: cautionText('R12', { where }) });
   }
+  // Each of the two MADs stands on half of the scores.
+  if (rule.measure === 'double MAD' && least < 20) {
+    notes.push({ type: 'caution', id: 'R12', text: cautionText('R12', { where: ` on a side of the median${where}` }) });
+  }
   return notes;
+}
+
+/** What a repeated rule, a moving criterion, adjusted fences and distances on several columns have to say. */
+function procedureNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule): Note[] {
+  const notes: Note[] = [];
+  const { limits } = detail.flagged;
+  const noun =
+    rule.on === 'participant' ? participantNoun(design.roles) : design.roles.rows === 'one score' ? 'score' : 'trial';
+  const passes = limits.flatMap((each) => (each.passes ? [each.passes] : []));
+  if (passes.length > 0) {
+    const sum = (key: 'first' | 'total') => passes.reduce((total, each) => total + each[key], 0);
+    const facts = {
+      first: counted(sum('first'), noun),
+      total: count(sum('total')),
+      passes: Math.max(...passes.map((each) => each.count)),
+    };
+    notes.push({ type: 'caution', id: 'R13', text: cautionText('R13', facts) });
+    if (rule.measure === 'SD') notes.push({ type: 'caution', id: 'R21', text: cautionText('R21', {}) });
+  }
+  const counts = countWords(detail);
+  if (rule.measure === 'moving' || rule.measure === 'recursive') {
+    notes.push({ type: 'note', id: 'MOVING', text: cautionText('MOVING', { counts }) });
+  }
+  if (rule.measure === 'adjusted fences' && Math.min(...limits.map((each) => each.n)) < 50) {
+    notes.push({ type: 'caution', id: 'ADJUSTED', text: cautionText('ADJUSTED', { counts }) });
+  }
+  if (rule.measure === 'MCD') notes.push(...distanceNotes(design, detail, rule));
+  return notes;
+}
+
+/** Participants for each column below which chi-square limits on MCD distances flag clearly too many. */
+const ENOUGH_FOR_MCD = 20;
+
+function distanceNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule): Note[] {
+  const [limits] = detail.flagged.limits;
+  if (limits?.reason !== undefined) {
+    return [{ type: 'caution', id: 'TOGETHER', text: cautionText('TOGETHER', { reason: limits.reason }) }];
+  }
+  const columns = rule.columns?.length ?? 1;
+  if (limits === undefined || limits.n >= ENOUGH_FOR_MCD * columns) return [];
+  const n = counted(limits.n, participantNoun(design.roles));
+  return [{ type: 'caution', id: 'MCDN', text: cautionText('MCDN', { n, columns }) }];
 }
 
 /** The share set aside, and whether it differs between conditions. */
@@ -109,18 +164,52 @@ function sharesByCondition(design: Design, detail: ExclusionDetail) {
 /** "18 to 20 scores": how many scores the scopes of the rule hold. */
 function countWords(detail: ExclusionDetail): string {
   const sizes = detail.flagged.limits.map((each) => each.n);
+  if (sizes.length === 0) return 'no scores';
   const [least, most] = [Math.min(...sizes), Math.max(...sizes)];
+  if (sizes.length === 1) return `${least} scores`;
   return least === most ? `${least} scores each` : `${least} to ${most} scores`;
 }
 
+/** What is zero where a rule has no limits. */
+const SPREADS: Readonly<Record<ExtremeRule['measure'], string>> = {
+  MAD: 'MAD',
+  'double MAD': 'MAD of that side',
+  SD: 'SD',
+  fences: 'quartile distance',
+  'hinge fences': 'hinge distance',
+  'adjusted fences': 'hinge distance',
+  Carling: 'quartile distance',
+  moving: 'SD',
+  recursive: 'SD',
+  MCD: 'spread',
+};
+
+/** How each measure is made, with its author where it has one. */
+const MADE: Readonly<Record<ExtremeRule['measure'], string>> = {
+  MAD: 'MAD = 1.4826 times the median distance from the median',
+  'double MAD':
+    'one MAD from the scores at or below the median, one from those at or above it, each 1.4826 times the median distance (common practice)',
+  SD: 'SD with divisor n \u2212 1; a score counts in its own mean and SD',
+  fences: 'quartiles interpolated (type 7)',
+  'hinge fences': 'hinges = medians of the lower and the upper half, the middle score in both (Tukey 1977)',
+  'adjusted fences':
+    'hinges; fences at k e^(\u22124 MC) and k e^(3 MC) hinge distances, the exponents changing places for MC below 0, MC = medcouple (Hubert & Vandervieren 2008)',
+  Carling:
+    'ideal fourths (type 8); median \u2213 k times their distance, k = (17.63 n \u2212 23.64) / (7.74 n \u2212 3.71) (Carling 2000)',
+  moving:
+    'mean and SD of all scores of the scope; cutoff 1.458 SD for 4 scores to 2.5 SD from 100 on, linear between the tabled sizes (Van Selst & Jolicoeur 1994, table from memory)',
+  recursive:
+    'mean and SD without the largest score; cutoff 8 SD for 4 scores to 3.5 SD from 100 on, linear between the tabled sizes; largest and smallest tested, repeated until neither goes (Van Selst & Jolicoeur 1994, modified recursive, table from memory)',
+  MCD: 'distance from the reweighted MCD of three quarters of the participants (Rousseeuw & Van Driessen 1999), limit: chi-square with one df a column; participants by their means over everything they met',
+};
+
 /** Every convention of the rule (methods 3.10). */
 function conventions(rule: ExtremeRule): string {
-  const measure =
-    rule.measure === 'MAD'
-      ? 'MAD = 1.4826 times the median distance from the median'
-      : rule.measure === 'SD'
-        ? 'SD with divisor n \u2212 1; a score counts in its own mean and SD'
-        : 'quartiles interpolated (type 7)';
   const sides = rule.sides === 'both' ? 'both sides' : rule.sides === 'above' ? 'high side only' : 'low side only';
-  return `${measure}; ${sides}; a score exactly on the limit is kept; one pass; raw scale; scopes of fewer than 3 scores are left alone; rules apply in the order of the cells (put rules on trials before rules on participants).`;
+  const least = rule.measure === 'moving' || rule.measure === 'recursive' ? 4 : 3;
+  const repeats = rule.measure === 'recursive' || rule.repeated === true;
+  const passes = repeats ? 'pass after pass until nobody more is outside' : 'one pass';
+  const around = rule.measure === 'MCD' ? '' : `${sides}; `;
+  const small = rule.measure === 'MCD' ? '' : `scopes of fewer than ${least} scores are left alone; `;
+  return `${MADE[rule.measure]}; ${around}a score exactly on the limit is kept; ${passes}; raw scale; ${small}rules apply in the order of the cells (put rules on trials before rules on participants).`;
 }

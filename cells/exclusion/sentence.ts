@@ -3,11 +3,12 @@ import type { Measure, Scope } from '../../src/analysis/rules.ts';
 import type { Column, Table } from '../../src/data/table.ts';
 import { choiceBlank, choicesBlank, columnOptions, numberBlank, numbersOnly, textBlank } from '../blanks.ts';
 import type { Blank, Context, Num, Option, Part } from '../kind.ts';
+import { beyondParts, tellsApart, togetherParts, whateverWords } from './distances.ts';
 
 export type ExclusionSettings = {
   /** What is set aside: participants by name, single trials (or scores), or whole participants. */
   readonly what: 'named' | 'trial' | 'participant';
-  readonly how: 'below' | 'above' | 'beyond' | 'kept-share';
+  readonly how: 'below' | 'above' | 'beyond' | 'kept-share' | 'together';
   readonly participants: readonly string[];
   /** Why: for named participants and fixed limits. */
   readonly reason: string;
@@ -20,6 +21,12 @@ export type ExclusionSettings = {
   readonly scope: Scope;
   /** Least share of kept trials, percent. */
   readonly least: Num;
+  /** Whether the rule looks again at who is left; absent in older files: it does not. */
+  readonly repeated?: boolean;
+  /** Columns judged together by MCD distance. */
+  readonly columns?: readonly string[];
+  /** Percent of normal participants within the limit on MCD distances. */
+  readonly within?: Num;
 };
 
 /** One sentence a form: "Set aside [officer 23] because ..." / "Set aside a [trial] when its [ack_ms] is ..." */
@@ -31,6 +38,9 @@ export function exclusionSentence(settings: ExclusionSettings, context: Context)
   }
   if (settings.what === 'participant' && settings.how === 'kept-share') {
     return ['Set aside ', what, ' with ', howBlank(settings), ' ', leastBlank(settings, context), ' kept trials.'];
+  }
+  if (settings.what === 'participant' && settings.how === 'together') {
+    return ['Set aside ', what, ...togetherParts(settings, howBlank(settings), context, design), '.'];
   }
   const head: Part[] = [
     'Set aside ',
@@ -46,37 +56,6 @@ export function exclusionSentence(settings: ExclusionSettings, context: Context)
     return [...head, limitBlank(settings, context, design), whatever, ', because ', reasonBlank(settings), '.'];
   }
   return [...head, ...beyondParts(settings, context, design), '.'];
-}
-
-function beyondParts(settings: ExclusionSettings, context: Context, design: Design | undefined): Part[] {
-  const cutoff = numberBlank(
-    { key: 'cutoff', label: 'cutoff' },
-    settings.cutoff,
-    context,
-    { min: 0.5, max: 10, step: 0.1, unit: '', none: 'any number of' },
-    (value) => ({ ...settings, cutoff: value }),
-  );
-  const measure = choiceBlank(
-    { key: 'measure', label: 'measure of distance' },
-    settings.measure,
-    [
-      { value: 'MAD', label: 'MAD', hint: 'from the median; MAD times 1.4826' },
-      { value: 'SD', label: 'SD', hint: 'from the mean; SD with divisor n \u2212 1' },
-      { value: 'fences', label: 'IQR', hint: 'outside the quartiles (interpolated, type 7)' },
-    ],
-    'MAD',
-    (value) => ({ ...settings, measure: value }),
-  );
-  const middle = settings.measure === 'SD' ? 'mean' : settings.measure === 'MAD' ? 'median' : 'quartiles';
-  const blind = settings.scope === 'pooled' || settings.scope === 'participant';
-  return [
-    cutoff,
-    ' ',
-    measure,
-    ` from the ${middle} of `,
-    scopeBlank(settings, design),
-    ...(blind ? [`, ${whateverWords(design)}`] : []),
-  ];
 }
 
 function whatBlank(settings: ExclusionSettings, design: Design | undefined): Blank {
@@ -97,7 +76,7 @@ function whatBlank(settings: ExclusionSettings, design: Design | undefined): Bla
 }
 
 function howFor(what: string, how: ExclusionSettings['how']): ExclusionSettings['how'] {
-  return what === 'trial' && how === 'kept-share' ? 'beyond' : how;
+  return what === 'trial' && (how === 'kept-share' || how === 'together') ? 'beyond' : how;
 }
 
 function scopeFor(what: string, scope: Scope): Scope {
@@ -106,28 +85,35 @@ function scopeFor(what: string, scope: Scope): Scope {
 }
 
 function howBlank(settings: ExclusionSettings): Blank {
-  const beyond =
-    settings.sides === 'both'
-      ? 'further than'
-      : settings.sides === 'above'
-        ? 'further above than'
-        : 'further below than';
   const options: Option[] = [
     { value: 'below', label: 'below', hint: 'a fixed limit' },
     { value: 'above', label: 'above', hint: 'a fixed limit' },
     { value: 'beyond both', label: 'further than', hint: 'on either side' },
     { value: 'beyond above', label: 'further above than', hint: 'on the high side only' },
     { value: 'beyond below', label: 'further below than', hint: 'on the low side only' },
+    {
+      value: 'beyond both again',
+      label: 'again and again further than',
+      hint: 'on either side, repeated until nobody more is; see the caution',
+    },
   ];
   if (settings.what === 'participant') {
-    options.push({ value: 'kept-share', label: 'fewer than', hint: 'share of kept trials' });
+    options.push(
+      { value: 'kept-share', label: 'fewer than', hint: 'share of kept trials' },
+      { value: 'together', label: 'further out than', hint: 'on several columns at once, by MCD distance' },
+    );
   }
-  const value = settings.how === 'beyond' ? `beyond ${settings.sides}` : settings.how;
-  const blank = choiceBlank({ key: 'how', label: 'how a score is judged' }, value, options, beyond, (next) => {
-    const [how, sides] = next.split(' ') as [ExclusionSettings['how'], ExclusionSettings['sides'] | undefined];
-    return { ...settings, how, sides: sides ?? settings.sides };
+  const { how, sides, repeated = false } = settings;
+  const value = how === 'beyond' ? `beyond ${sides}${repeated ? ' again' : ''}` : how;
+  return choiceBlank({ key: 'how', label: 'how a score is judged' }, value, options, 'further than', (next) => {
+    const [nextHow, nextSides, again] = next.split(' ') as [
+      ExclusionSettings['how'],
+      ExclusionSettings['sides'] | undefined,
+      string | undefined,
+    ];
+    const { repeated: _, ...rest } = settings;
+    return { ...rest, how: nextHow, sides: nextSides ?? sides, ...(again === 'again' ? { repeated: true } : {}) };
   });
-  return blank;
 }
 
 function namesBlank(settings: ExclusionSettings, design: Design | undefined): Blank {
@@ -150,8 +136,7 @@ function reasonBlank(settings: ExclusionSettings): Blank {
 function columnBlank(settings: ExclusionSettings, design: Design | undefined): Blank {
   const table: Table | undefined = design?.table;
   const roles = design?.roles;
-  const fits = (column: Column) =>
-    numbersOnly(column) ?? (column.name === roles?.participant ? 'tells participants apart' : null);
+  const fits = (column: Column) => numbersOnly(column) ?? tellsApart(column, design);
   return choiceBlank(
     { key: 'column', label: 'column judged' },
     settings.column || roles?.outcome || null,
@@ -180,41 +165,4 @@ function leastBlank(settings: ExclusionSettings, context: Context): Blank {
     { min: 0, max: 100, step: 5, unit: '%' },
     (least) => ({ ...settings, least }),
   );
-}
-
-function scopeBlank(settings: ExclusionSettings, design: Design | undefined): Blank {
-  const noun = design ? participantNoun(design.roles) : 'participant';
-  const factors = design?.factors.map((factor) => factor.name).join(' and ') || 'condition';
-  const options: Option[] =
-    settings.what === 'participant'
-      ? [
-          { value: 'pooled', label: `all ${noun}s`, hint: 'pooled over groups' },
-          { value: 'condition', label: 'the same group', hint: 'reads the condition: p and interval are withheld' },
-        ]
-      : [
-          { value: 'participant', label: `the same ${noun}`, hint: `pooled over ${factors}` },
-          { value: 'pooled', label: 'all scores', hint: 'pooled over everything' },
-          {
-            value: 'condition',
-            label: `the same ${factors}`,
-            hint: 'reads the condition: p and interval are withheld',
-          },
-          { value: 'participant-condition', label: `the same ${noun} and ${factors}`, hint: 'reads the condition' },
-        ];
-  return choiceBlank(
-    { key: 'scope', label: 'scores the distance is measured among' },
-    settings.scope,
-    options,
-    'all scores',
-    (scope) => ({
-      ...settings,
-      scope,
-    }),
-  );
-}
-
-/** "whatever the alert": said of every rule that does not read the condition. */
-function whateverWords(design: Design | undefined): string {
-  const factors = design?.factors.map((factor) => factor.name) ?? [];
-  return `whatever the ${factors.length === 0 ? 'condition' : factors.join(' and ')}`;
 }

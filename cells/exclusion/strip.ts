@@ -35,7 +35,7 @@ export function stripOf(
     mark: drawn.mark,
     rows: design.participants.length,
     log,
-    unit: design.roles.unit,
+    unit: detail.flagged.distances === undefined ? design.roles.unit : '',
     axis: `${words}${log ? ', log scale' : ''}`,
     limits: limitsByRow(design, detail, place),
   };
@@ -65,12 +65,14 @@ function trialPoints(design: Design, detail: ExclusionDetail) {
 }
 
 function meanPoints(design: Design, detail: ExclusionDetail) {
-  const means = participantMeans({
-    values: valuesOf(design, detail),
-    kept: detail.before.kept,
-    participant: design.participant,
-    participants: design.participants.length,
-  });
+  const means =
+    detail.flagged.distances ??
+    participantMeans({
+      values: valuesOf(design, detail),
+      kept: detail.before.kept,
+      participant: design.participant,
+      participants: design.participants.length,
+    });
   const lost = new Set(design.steps.at(-1)?.participants ?? []);
   const present = Array.from(means.keys()).filter((who) => !Number.isNaN(means[who] as number));
   return {

@@ -30,7 +30,9 @@ function steady(design: Design, detail: ExclusionDetail): Strip {
   const column =
     detail.rule.rule === 'limit' || detail.rule.rule === 'extreme' ? detail.rule.column : design.roles.outcome;
   const unit = column === design.roles.outcome && design.roles.unit !== '' ? ` (${design.roles.unit})` : '';
-  const what = on === 'participants' ? `mean ${column}${unit}` : `${column}${unit}`;
+  const together = detail.rule.rule === 'extreme' ? detail.rule.columns : undefined;
+  const one = on === 'participants' ? `mean ${column}${unit}` : `${column}${unit}`;
+  const what = together === undefined ? one : `MCD distance on ${together.join(' and ')}`;
   const words = `${what} \u00b7 one row per ${noun}, in shuffled order \u00b7 conditions not shown`;
   const made = stripOf(design, detail, on, words);
   const before = strips.get(detail.before);

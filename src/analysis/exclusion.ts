@@ -27,7 +27,18 @@ export interface Applied {
  * @source order (trials before participants, one pass) and conventions: methods 3.10
  */
 export function applyRule(design: Design, rule: Rule): Applied {
-  const flagged = flag(design, rule);
+  return applyFlagged(design, rule, flag(design, rule));
+}
+
+/**
+ * The same where the marks have been made already, as by a worker.
+ *
+ * @param design the design above, not modified
+ * @param rule the rule that made the marks
+ * @param flagged its marks, one a row of the design
+ * @returns as applyRule
+ */
+export function applyFlagged(design: Design, rule: Rule, flagged: Flagged): Applied {
   const kept = design.kept.slice();
   const rows: number[] = [];
   for (let row = 0; row < kept.length; row++) {
@@ -65,11 +76,25 @@ function flag(design: Design, rule: Rule): Flagged {
       return flagLimit(blindScores(design, rule.column), rule);
     case 'extreme':
       return rule.scope === 'pooled' || rule.scope === 'participant'
-        ? flagExtremeBlind(blindScores(design, rule.column), rule)
+        ? flagExtremeBlind(extremeScores(design, rule), rule)
         : flagExtremeByCondition(blindScores(design, rule.column), conditionOf(design, rule), rule);
     case 'kept-share':
       return flagKeptShare(design.kept, design.participant, design.participants.length, rule);
   }
+}
+
+/**
+ * What a blind extremity rule may look at: scores, marks and participants, and nothing of the conditions.
+ *
+ * @param design the design above
+ * @param rule the rule, for its columns
+ * @returns the scores of its column, and of every column where it judges several together
+ * @throws Refusal where a column is not in the table or holds no numbers
+ */
+export function extremeScores(design: Design, rule: ExtremeRule): BlindScores {
+  const scores = blindScores(design, rule.column);
+  if (rule.columns === undefined) return scores;
+  return { ...scores, together: rule.columns.map((column) => blindScores(design, column).values) };
 }
 
 function blindScores(design: Design, column: string): BlindScores {

@@ -2,9 +2,8 @@
  * Which rows a rule flags. The functions for blind rules take scores, marks and participants: they have no parameter
  * through which a condition could reach them. One function, flagExtremeByCondition, takes the condition, and says so.
  */
-import { fenceLimits } from '../numerics/rules/iqr-fences.ts';
-import { madLimits } from '../numerics/rules/mad.ts';
-import { zScoreLimits } from '../numerics/rules/z-score.ts';
+import { judgeScope } from './judge-scope.ts';
+import { judgeTogether } from './judge-together.ts';
 import type { ExtremeRule, KeptShareRule, LimitRule } from './rules.ts';
 
 /** Limits of one scope: a score strictly outside them is set aside, one exactly on a limit is kept. */
@@ -17,6 +16,8 @@ export interface ScopeLimits {
   readonly n: number;
   /** Why there are no limits here. */
   readonly reason?: string;
+  /** A repeated rule: how often it looked, and how many scores it set aside in its first pass and in all. */
+  readonly passes?: { readonly count: number; readonly first: number; readonly total: number };
 }
 
 /** What a rule flagged, and the limits it used. */
@@ -24,6 +25,8 @@ export interface Flagged {
   /** One mark a row; 1 = set aside by this rule. */
   readonly rows: Uint8Array;
   readonly limits: readonly ScopeLimits[];
+  /** Measure MCD: distance of each participant from the middle of all; NaN for a participant without one. */
+  readonly distances?: Float64Array;
 }
 
 /** Scores a rule may look at while the conditions are hidden: no field of it carries a condition. */
@@ -32,10 +35,9 @@ export interface BlindScores {
   readonly kept: Uint8Array;
   readonly participant: Int32Array;
   readonly participants: number;
+  /** Measure MCD: the values of every column judged together. */
+  readonly together?: readonly Float64Array[];
 }
-
-/** Fewest scores a scope must have before limits are made from them. */
-export const LEAST_IN_SCOPE = 3;
 
 /** A fixed limit on trials, or on each participant's mean of a column. Takes no condition. */
 export function flagLimit(scores: BlindScores, rule: LimitRule): Flagged {
@@ -65,6 +67,7 @@ export function flagLimit(scores: BlindScores, rule: LimitRule): Flagged {
 
 /** Distance from the middle of all scores, or of the same participant's. Takes no condition. */
 export function flagExtremeBlind(scores: BlindScores, rule: ExtremeRule): Flagged {
+  if (rule.measure === 'MCD') return flagTogether(scores, rule);
   if (rule.on === 'participant') return flagParticipants(scores, new Int32Array(scores.participants), 1, rule);
   const scope = rule.scope === 'participant' ? scores.participant : new Int32Array(scores.values.length);
   return flagTrials(scores, scope, rule.scope === 'participant' ? scores.participants : 1, rule);
@@ -86,19 +89,18 @@ export function flagExtremeByCondition(
 }
 
 function flagTrials(scores: BlindScores, scope: Int32Array, scopes: number, rule: ExtremeRule): Flagged {
-  const rows = new Uint8Array(scores.values.length);
-  const { gathered, start } = gather(scores, scope, scopes);
+  const flags = new Uint8Array(scores.values.length);
+  const { gathered, rows, start } = gather(scores, scope, scopes);
   const limits: ScopeLimits[] = [];
   for (let each = 0; each < scopes; each++) {
-    const values = gathered.subarray(start[each] as number, start[each + 1] as number);
-    if (values.length > 0) limits[each] = limitsOf(values, each, rule);
+    const from = start[each] as number;
+    const values = gathered.subarray(from, start[each + 1] as number);
+    if (values.length === 0) continue;
+    const judged = judgeScope(values, each, rule);
+    limits.push(judged.limits);
+    for (let i = 0; i < values.length; i++) if (judged.flags[i] === 1) flags[rows[from + i] as number] = 1;
   }
-  for (let row = 0; row < rows.length; row++) {
-    const each = scope[row] as number;
-    if (scores.kept[row] !== 1 || each < 0) continue;
-    if (isOutside(scores.values[row] as number, limits[each], rule)) rows[row] = 1;
-  }
-  return { rows, limits: limits.filter((each) => each !== undefined) };
+  return { rows: flags, limits };
 }
 
 function flagParticipants(scores: BlindScores, group: Int32Array, groups: number, rule: ExtremeRule): Flagged {
@@ -111,44 +113,40 @@ function flagParticipants(scores: BlindScores, group: Int32Array, groups: number
       if (group[who] === each && !Number.isNaN(means[who] as number)) members.push(who);
     }
     if (members.length === 0) continue;
-    const limit = limitsOf(
-      Float64Array.from(members, (who) => means[who] as number),
-      each,
-      rule,
-    );
-    limits.push(limit);
-    for (const who of members) if (isOutside(means[who] as number, limit, rule)) out[who] = 1;
+    const values = Float64Array.from(members, (who) => means[who] as number);
+    const judged = judgeScope(values, each, rule);
+    limits.push(judged.limits);
+    members.forEach((who, i) => {
+      out[who] = judged.flags[i] as number;
+    });
   }
-  const rows = scores.participant.map((who) => (who >= 0 ? (out[who] as number) : 0));
-  return { rows: Uint8Array.from(rows), limits };
+  return { rows: rowsOf(scores, out), limits };
 }
 
-function limitsOf(values: Float64Array, scope: number, rule: ExtremeRule): ScopeLimits {
-  const none = { scope, lower: null, upper: null, n: values.length };
-  if (rule.cutoff === null) return none;
-  if (values.length < LEAST_IN_SCOPE) {
-    return { ...none, reason: `fewer than ${LEAST_IN_SCOPE} scores` };
+/** Participants by their means of several columns at once; one without a kept value in some column is not judged. */
+function flagTogether(scores: BlindScores, rule: ExtremeRule): Flagged {
+  const means = (scores.together ?? [scores.values]).map((values) => participantMeans({ ...scores, values }));
+  const members: number[] = [];
+  for (let who = 0; who < scores.participants; who++) {
+    if (means.every((column) => !Number.isNaN(column[who] as number))) members.push(who);
   }
-  const made =
-    rule.measure === 'MAD'
-      ? madLimits(values, { cutoff: rule.cutoff })
-      : rule.measure === 'SD'
-        ? zScoreLimits(values, { cutoff: rule.cutoff })
-        : fenceLimits(values, { k: rule.cutoff, quartiles: 'type7' });
-  if (made.lower === null || made.upper === null) return { ...none, reason: 'more than half of the scores are equal' };
-  return {
-    ...none,
-    lower: rule.sides === 'above' ? null : made.lower,
-    upper: rule.sides === 'below' ? null : made.upper,
-  };
+  const columns = means.map((column) => Float64Array.from(members, (who) => column[who] as number));
+  const judged = judgeTogether(columns, rule);
+  const out = new Uint8Array(scores.participants);
+  const distances = new Float64Array(scores.participants).fill(NaN);
+  members.forEach((who, i) => {
+    out[who] = judged.flags[i] as number;
+    distances[who] = judged.distances[i] as number;
+  });
+  return { rows: rowsOf(scores, out), limits: [judged.limits], distances };
 }
 
-function isOutside(value: number, limits: ScopeLimits | undefined, rule: ExtremeRule): boolean {
-  if (!limits || rule.cutoff === null) return false;
-  return (limits.lower !== null && value < limits.lower) || (limits.upper !== null && value > limits.upper);
+/** The rows of the participants marked. */
+function rowsOf(scores: BlindScores, out: Uint8Array): Uint8Array {
+  return Uint8Array.from(scores.participant, (who) => (who >= 0 ? (out[who] as number) : 0));
 }
 
-/** Kept scores sorted into their scopes (counting sort): scope s is gathered[start[s] .. start[s + 1]). */
+/** Kept scores and their rows sorted into scopes (counting sort): scope s is gathered[start[s] .. start[s + 1]). */
 function gather(scores: BlindScores, scope: Int32Array, scopes: number) {
   const start = new Int32Array(scopes + 1);
   const usable = (row: number) =>
@@ -159,13 +157,15 @@ function gather(scores: BlindScores, scope: Int32Array, scopes: number) {
   for (let each = 0; each < scopes; each++) start[each + 1] = (start[each + 1] as number) + (start[each] as number);
   const next = start.slice();
   const gathered = new Float64Array(start[scopes] as number);
+  const rows = new Int32Array(gathered.length);
   for (let row = 0; row < scope.length; row++) {
     if (!usable(row)) continue;
-    const each = scope[row] as number;
-    gathered[next[each] as number] = scores.values[row] as number;
-    next[each] = (next[each] as number) + 1;
+    const at = next[scope[row] as number] as number;
+    gathered[at] = scores.values[row] as number;
+    rows[at] = row;
+    next[scope[row] as number] = at + 1;
   }
-  return { gathered, start };
+  return { gathered, rows, start };
 }
 
 /** Mean of each participant's kept scores; NaN for a participant without any. */

@@ -2,7 +2,7 @@
 import { type Column, type Table, takeRows } from '../data/table.ts';
 import type { Rng } from '../numerics/rng.ts';
 import type { Design, Factor } from './design.ts';
-import type { Rule } from './rules.ts';
+import { columnsRead, type Rule } from './rules.ts';
 
 /** The labels a comparison is about. */
 export interface Labels {
@@ -138,9 +138,7 @@ function drawnParticipants(design: Design, rowsOf: readonly (readonly number[])[
 
 /** The columns the rules read beside the outcome. */
 function narrowTable(table: Table, rules: readonly Rule[]): Table {
-  const wanted = new Set(
-    rules.flatMap((rule) => (rule.rule === 'limit' || rule.rule === 'extreme' ? [rule.column] : [])),
-  );
+  const wanted = new Set(rules.flatMap(columnsRead));
   const columns = table.columns.filter((column: Column) => wanted.has(column.name));
   return { ...table, columns };
 }

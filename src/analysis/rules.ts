@@ -1,7 +1,21 @@
 /** THE LIST of exclusion rules: what each may be set to, what it reads, and its short words. */
 
 export type Scope = 'pooled' | 'participant' | 'condition' | 'participant-condition';
-export type Measure = 'MAD' | 'SD' | 'fences';
+/** How far a score lies from the others is measured; old files say "fences" for quartiles of type 7. */
+export type Measure =
+  | 'MAD'
+  | 'double MAD'
+  | 'SD'
+  | 'fences'
+  | 'hinge fences'
+  | 'adjusted fences'
+  | 'Carling'
+  | 'moving'
+  | 'recursive'
+  | 'MCD';
+
+/** Measures whose own definition says how far is too far, by the number of scores: their cutoff is 1. */
+export const OWN_CUTOFF: ReadonlySet<Measure> = new Set(['Carling', 'moving', 'recursive']);
 
 /** A documented fault: participants by name, with the reason. */
 export interface NamedRule {
@@ -21,7 +35,10 @@ export interface LimitRule {
   readonly reason: string;
 }
 
-/** Further than k SD, MAD or quartile distances from the middle of the scores in its scope. */
+/**
+ * Further than k SD, MAD or quartile distances from the middle of the scores in its scope; with the measure MCD further out on
+ * several columns together than k percent of normal participants.
+ */
 export interface ExtremeRule {
   readonly rule: 'extreme';
   readonly on: 'trial' | 'participant';
@@ -31,6 +48,10 @@ export interface ExtremeRule {
   readonly cutoff: number | null;
   readonly scope: Scope;
   readonly sides: 'both' | 'above' | 'below';
+  /** Whether it looks again at who is left until nobody more is beyond it. */
+  readonly repeated?: boolean;
+  /** Measure MCD: the columns judged together; `column` is the first of them. */
+  readonly columns?: readonly string[];
 }
 
 /** A participant with fewer than a share of kept trials. */
@@ -77,14 +98,34 @@ export function ruleLabel(rule: Rule, unit: string): string {
     case 'limit':
       return rule.limit === null ? 'no limit' : `${rule.side} ${rule.limit}${unit === '' ? '' : ` ${unit}`}`;
     case 'extreme':
-      return `${cutoffLabel(rule)} ${SCOPE_WORDS[rule.scope]}`;
+      return rule.measure === 'MCD' ? cutoffLabel(rule) : `${cutoffLabel(rule)} ${SCOPE_WORDS[rule.scope]}`;
     case 'kept-share':
       return rule.least === null ? 'no least share' : `fewer than ${rule.least} % kept`;
   }
 }
 
-/** "beyond 3 MAD", "beyond fences of 1.5 quartile distances", "no cutoff". */
-export function cutoffLabel(rule: Pick<ExtremeRule, 'measure' | 'cutoff'>): string {
+/** Columns of the table a rule reads. */
+export function columnsRead(rule: Rule): readonly string[] {
+  if (rule.rule === 'limit') return [rule.column];
+  return rule.rule === 'extreme' ? (rule.columns ?? [rule.column]) : [];
+}
+
+const DISTANCES: Readonly<Record<Measure, (cutoff: number) => string>> = {
+  MAD: (cutoff) => `${cutoff} MAD`,
+  'double MAD': (cutoff) => `${cutoff} MAD of its side`,
+  SD: (cutoff) => `${cutoff} SD`,
+  fences: (cutoff) => `fences of ${cutoff} IQR`,
+  'hinge fences': (cutoff) => `fences of ${cutoff} hinge distances`,
+  'adjusted fences': (cutoff) => `skew-adjusted fences of ${cutoff} hinge distances`,
+  Carling: () => 'Carling\u2019s limits',
+  moving: () => 'the moving criterion',
+  recursive: () => 'the recursive moving criterion',
+  MCD: (cutoff) => `${cutoff} % of MCD distances`,
+};
+
+/** "beyond 3 MAD", "beyond fences of 1.5 IQR", "beyond 2 SD, repeated", "no cutoff". */
+export function cutoffLabel(rule: Pick<ExtremeRule, 'measure' | 'cutoff' | 'repeated' | 'columns'>): string {
   if (rule.cutoff === null) return 'no cutoff';
-  return rule.measure === 'fences' ? `beyond fences of ${rule.cutoff} IQR` : `beyond ${rule.cutoff} ${rule.measure}`;
+  const on = rule.columns === undefined ? '' : ` on ${rule.columns.join(' and ')}`;
+  return `beyond ${DISTANCES[rule.measure](rule.cutoff)}${on}${rule.repeated === true ? ', repeated,' : ''}`;
 }

@@ -4,11 +4,13 @@ import type { CheckLayout } from '../analysis/checks-layout.ts';
 import type { ClaimSpec } from '../analysis/claim.ts';
 import type { Result } from '../analysis/compare.ts';
 import { compareSamples } from '../analysis/compare.ts';
+import { type BlindScores, flagExtremeBlind } from '../analysis/flagging.ts';
 import { findInfluence, type InfluenceSpec } from '../analysis/influence.ts';
 import { countJoint } from '../analysis/joint.ts';
 import { type JointPlan, planJoint } from '../analysis/joint-plan.ts';
 import { compareLevels } from '../analysis/omnibus.ts';
 import { runPipeline } from '../analysis/pipeline.ts';
+import type { ExtremeRule } from '../analysis/rules.ts';
 import { sweepClaim } from '../analysis/sweep.ts';
 import { longWork } from './long-work.ts';
 import type { JobEnv } from './runner.ts';
@@ -36,6 +38,9 @@ export const jobs = {
   /** What a comparison assumes, with what the checks could have shown (analysis/checks.ts). */
   checks: (args: { readonly layout: CheckLayout; readonly options: CheckOptions }, env: JobEnv) =>
     checkAssumptions(args.layout, args.options, stepOf(env)),
+  /** Rows that a blind extremity rule flags (analysis/flagging.ts). */
+  flagExtreme: (args: { readonly scores: BlindScores; readonly rule: ExtremeRule }) =>
+    flagExtremeBlind(args.scores, args.rule),
   /** Some rows of an association (analysis/association.ts). */
   associate: associateRows,
 };
