@@ -91,19 +91,30 @@ export function textBlank(
   };
 }
 
-/** The columns of a table as options, each with its type and missing count; `fits` says why one cannot be chosen. */
-export function columnOptions(table: Table | undefined, fits?: (column: Column) => string | null): Option[] {
+/**
+ * The columns of a table as options, each with its type and missing count; `fits` says why one cannot be chosen. While
+ * the conditions are hidden the type alone is told: in a wide file each column is a condition.
+ */
+export function columnOptions(
+  table: Table | undefined,
+  fits?: (column: Column) => string | null,
+  blind = false,
+): Option[] {
   return (table?.columns ?? []).map((column) => {
-    const missing = missingCount(column);
-    const kinds = column.type === 'number' ? 'numbers' : `${column.type}, ${count(column.levels.length)} different`;
-    const option = {
-      value: column.name,
-      label: column.name,
-      hint: missing > 0 ? `${kinds}, ${count(missing)} missing` : kinds,
-    };
+    const option = { value: column.name, label: column.name, hint: blind ? typeWord(column) : columnHint(column) };
     const refused = fits?.(column) ?? null;
     return refused === null ? option : { ...option, refused };
   });
+}
+
+function typeWord(column: Column): string {
+  return column.type === 'number' ? 'numbers' : column.type;
+}
+
+function columnHint(column: Column): string {
+  const missing = missingCount(column);
+  const kinds = column.type === 'number' ? 'numbers' : `${column.type}, ${count(column.levels.length)} different`;
+  return missing > 0 ? `${kinds}, ${count(missing)} missing` : kinds;
 }
 
 /** Refuses columns that are not numbers. */

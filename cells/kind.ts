@@ -3,6 +3,7 @@ import type { Checks } from '../src/analysis/checks.ts';
 import type { ClaimValue } from '../src/analysis/claim.ts';
 import type { Result } from '../src/analysis/compare.ts';
 import type { Design } from '../src/analysis/design.ts';
+import type { Rates } from '../src/analysis/error-rates.ts';
 import type { Influence } from '../src/analysis/influence.ts';
 import type { Scores } from '../src/analysis/score.ts';
 import type { Sweep } from '../src/analysis/sweep.ts';
@@ -20,6 +21,7 @@ export interface Values {
   readonly result: Result;
   readonly claim: ClaimValue;
   readonly influence: Influence;
+  readonly rates: Rates;
   readonly sweep: Sweep;
   readonly association: Association;
 }
@@ -121,6 +123,12 @@ export interface Context {
   readonly own?: Computed<unknown> | undefined;
   /** Data blocks of the worksheet: id and file name. */
   readonly data: readonly { readonly id: string; readonly name: string }[];
+  /** Whether the conditions are hidden: nothing said then may depend on which condition a row belongs to. */
+  readonly blind?: boolean;
+  /** The nearest design above that is there, also past cells that are veiled. */
+  readonly design?: Design | undefined;
+  /** Port -> settings of the cell it reads. */
+  readonly above?: { readonly [port: string]: Settings };
 }
 
 // ---------------------------------------------------------------------------------------------- stem and margin
@@ -165,6 +173,8 @@ export interface Env {
   data(id: string): StoredData | undefined;
   /** The worksheet's seed. */
   readonly seed: number;
+  /** Whether the conditions are hidden; only kinds with a blind output of their own may look. */
+  readonly blind?: boolean;
 }
 
 /** A data block as the worksheet stores it (src/worksheet/format.ts, DataBlock). */

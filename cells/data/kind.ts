@@ -2,12 +2,15 @@ import { tableFromStored } from '../../src/data/stored.ts';
 import { asLevels, missingCount, type Table } from '../../src/data/table.ts';
 import { defineKind, type Note, Refusal, type TableOut } from '../kind.ts';
 import { count, counted } from '../numbers.ts';
+import { hiddenColumns, hiddenNotes } from './hidden.ts';
 import { type DataSettings, dataSentence } from './sentence.ts';
 
 /** What the data cell shows beside the table. */
 export interface DataDetail {
   readonly name: string;
   readonly warnings: readonly string[];
+  /** Whether the conditions are hidden: no value of a row is shown then. */
+  readonly hidden?: boolean;
 }
 
 /** Reads a data block of the worksheet into a table. */
@@ -18,7 +21,7 @@ export const dataKind = defineKind<DataSettings, Record<string, never>, 'table',
   offer: 'Read another data file',
   takes: {},
   gives: 'table',
-  blind: 'same',
+  blind: ({ value, detail }) => ({ value, detail: { name: detail.name, warnings: [], hidden: true } }),
   defaults: (context) => ({ data: context.data.at(-1)?.id ?? null, row: 'trial', participant: null }),
   check: (settings) => (settings.data === null ? ['No data yet: open, paste or drop a file of rows.'] : []),
   compute(settings, _given, env) {
@@ -35,14 +38,19 @@ export const dataKind = defineKind<DataSettings, Record<string, never>, 'table',
     share: 1,
   }),
   notes: ({ value, detail }) => dataNotes(value, detail),
-  tables: ({ value }) => [columnTable(value), firstRows(value)],
-  record: ({ value }) => ({
+  tables: ({ value, detail }) =>
+    detail.hidden === true ? [hiddenColumns(value)] : [columnTable(value), firstRows(value)],
+  record: ({ value, detail }) => ({
     rows: value.rows,
-    columns: value.columns.map((each) => ({ name: each.name, type: each.type, missing: missingCount(each) })),
+    columns:
+      detail.hidden === true
+        ? value.columns.map((each) => ({ name: each.name, type: each.type }))
+        : value.columns.map((each) => ({ name: each.name, type: each.type, missing: missingCount(each) })),
   }),
 });
 
 function dataNotes(table: Table, detail: DataDetail): Note[] {
+  if (detail.hidden === true) return hiddenNotes(table);
   const notes: Note[] = detail.warnings.map((text) => ({ type: 'caution', text }));
   const missing = table.columns.filter((column) => missingCount(column) > 0);
   if (missing.length > 0) {

@@ -39,7 +39,7 @@ export function dataSentence(settings: DataSettings, context: Context): Part[] {
   const who = choiceBlank(
     { key: 'participant', label: 'column that tells participants apart' },
     name,
-    columnOptions(table),
+    columnOptions(table, undefined, context.blind),
     'which participants',
     (value) => ({ ...settings, participant: value }),
   );

@@ -12,7 +12,14 @@ export interface DeriveDetail {
   /** Rows a filter dropped; null where a column was made. */
   readonly dropped: number | null;
   readonly warnings: readonly string[];
+  /** Whether the conditions are hidden: nothing is told of single values then. */
+  readonly hidden?: boolean;
 }
+
+const QUIET: Note = {
+  type: 'note',
+  text: 'What this does to single values is told once the conditions are open.',
+};
 
 /** Makes a column, or keeps some of the rows. */
 export const deriveKind = defineKind<DeriveSettings, { readonly table: 'table' }, 'table', DeriveDetail>({
@@ -22,7 +29,7 @@ export const deriveKind = defineKind<DeriveSettings, { readonly table: 'table' }
   offer: 'Let a new column be made, or keep some rows only',
   takes: { table: 'table' },
   gives: 'table',
-  blind: 'same',
+  blind: ({ value, detail }) => ({ value, detail: { ...detail, warnings: [], hidden: true } }),
   defaults: (context) => defaultSettings(context),
   check: checkSettings,
   compute(settings, { table }) {
@@ -39,7 +46,8 @@ export const deriveKind = defineKind<DeriveSettings, { readonly table: 'table' }
     detail.dropped === null || detail.dropped === 0
       ? {}
       : { count: value.rows, label: 'rows', setAside: detail.dropped },
-  notes: ({ detail }) => detail.warnings.map((text): Note => ({ type: 'caution', text })),
+  notes: ({ detail }) =>
+    detail.hidden === true ? [QUIET] : detail.warnings.map((text) => ({ type: 'caution', text })),
   record: ({ value, detail }) => ({
     rows: value.rows,
     dropped: detail.dropped,

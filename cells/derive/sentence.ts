@@ -1,4 +1,5 @@
-import { asLevels, columnOf, type Table } from '../../src/data/table.ts';
+import { shownLevels } from '../../src/analysis/hidden-design.ts';
+import { columnOf, type Table } from '../../src/data/table.ts';
 import { choiceBlank, columnOptions, numbersOnly, textBlank, words } from '../blanks.ts';
 import type { Computed, Context, Part } from '../kind.ts';
 import { count } from '../numbers.ts';
@@ -54,11 +55,11 @@ export function deriveSentence(settings: DeriveSettings, context: Context): Part
     (make) => ({ ...settings, make: make === 'filter' ? 'filter' : 'function' }),
   );
   return settings.make === 'filter'
-    ? [lead, ' ', ...filterParts(settings, table), dropped(context), '.']
-    : [lead, ' ', ...letParts(settings, table), '.'];
+    ? [lead, ' ', ...filterParts(settings, table, context.blind), dropped(context), '.']
+    : [lead, ' ', ...letParts(settings, table, context.blind), '.'];
 }
 
-function letParts(settings: DeriveSettings, table: Table | undefined): Part[] {
+function letParts(settings: DeriveSettings, table: Table | undefined, blind?: boolean): Part[] {
   const name = textBlank({ key: 'name', label: 'name of the new column' }, settings.name, 'which name', (value) => ({
     ...settings,
     name: value,
@@ -84,7 +85,7 @@ function letParts(settings: DeriveSettings, table: Table | undefined): Part[] {
   const of = choiceBlank(
     { key: 'of', label: 'column read' },
     settings.of || null,
-    columnOptions(table, settings.make === 'function' ? numbersOnly : undefined),
+    columnOptions(table, settings.make === 'function' ? numbersOnly : undefined, blind),
     'which column',
     (value) => ({ ...settings, of: value }),
   );
@@ -98,7 +99,7 @@ function letParts(settings: DeriveSettings, table: Table | undefined): Part[] {
     return [name, ' be ', how, ' ', formula];
   }
   if (settings.make === 'recode') {
-    const example = recodeExample(settings, table);
+    const example = recodeExample(settings, table, blind === true);
     const map = textBlank(
       { key: 'map', label: 'recoding' },
       settings.map,
@@ -111,11 +112,11 @@ function letParts(settings: DeriveSettings, table: Table | undefined): Part[] {
   return [name, ' be ', how, ' of ', of];
 }
 
-function filterParts(settings: DeriveSettings, table: Table | undefined): Part[] {
+function filterParts(settings: DeriveSettings, table: Table | undefined, blind?: boolean): Part[] {
   const column = choiceBlank(
     { key: 'of', label: 'column judged' },
     settings.of || null,
-    columnOptions(table),
+    columnOptions(table, undefined, blind),
     'which column',
     (of) => ({ ...settings, of }),
   );
@@ -140,9 +141,9 @@ function dropped(context: Context): string {
   return ` (${count(detail.dropped)} of ${count(detail.rowsBefore)} rows dropped)`;
 }
 
-function recodeExample(settings: DeriveSettings, table: Table | undefined): string {
+function recodeExample(settings: DeriveSettings, table: Table | undefined, blind: boolean): string {
   const column = table && settings.of !== '' ? columnOf(table, settings.of) : undefined;
-  const levels = column ? asLevels(column).levels.slice(0, 2) : ['old'];
+  const levels = column ? shownLevels(column, blind).slice(0, 2) : ['old'];
   return levels.map((level) => `${level} = \u2026`).join('; ');
 }
 

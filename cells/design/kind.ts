@@ -1,4 +1,5 @@
 import { type Design, declareDesign, participantNoun } from '../../src/analysis/design.ts';
+import { hideConditions, leakWords } from '../../src/analysis/hidden-design.ts';
 import { asLevels, type Column, type Table } from '../../src/data/table.ts';
 import { type Context, defineKind, type Note, type TableOut } from '../kind.ts';
 import { count, counted, plural } from '../numbers.ts';
@@ -12,7 +13,7 @@ export const designKind = defineKind<DesignSettings, { readonly table: 'table' }
   offer: 'State the design: participants, conditions, outcome',
   takes: { table: 'table' },
   gives: 'design',
-  blind: 'same',
+  blind: ({ value, detail }) => ({ value: hideConditions(value), detail }),
   defaults: (context) => guess(context),
   check(settings) {
     if (settings.participant === '') return ['Say which column tells participants apart.'];
@@ -21,7 +22,7 @@ export const designKind = defineKind<DesignSettings, { readonly table: 'table' }
       ? ['Say which column is the condition: one that every participant met, or one that differs between participants.']
       : [];
   },
-  compute: (settings, { table }) => ({ value: declareDesign(table, settings), detail: null }),
+  compute: (settings, { table }, env) => ({ value: declareDesign(table, settings, env.blind), detail: null }),
   sentence: designSentence,
   say: ({ value }) =>
     `${counted(value.participants.length, participantNoun(value.roles))} with ${counted(value.table.rows - value.missingRows, 'complete row')}.`,
@@ -62,13 +63,16 @@ function designNotes(design: Design): Note[] {
     });
   }
   if (design.missingCells.length > 0) {
-    const named = design.missingCells.slice(0, 4).map((each) => `${noun} ${each.participant} under ${each.condition}`);
+    const named = design.missingCells
+      .slice(0, 4)
+      .map((each) => `${noun} ${each.participant}${each.condition === '' ? '' : ` under ${each.condition}`}`);
     const more = design.missingCells.length - named.length;
     notes.push({
       type: 'caution',
-      text: `Without any row: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}. A comparison that needs such a score leaves that ${noun} out.`,
+      text: `Without any row${design.hidden ? ' under one of the conditions' : ''}: ${named.join('; ')}${more > 0 ? `; and ${more} more` : ''}. A comparison that needs such a score leaves that ${noun} out.`,
     });
   }
+  for (const text of leakWords(design)) notes.push({ type: 'note', lead: 'Hidden.', text });
   return notes;
 }
 
@@ -77,9 +81,9 @@ function missingTable(design: Design): TableOut {
     title: `${count(design.missingCells.length)} combinations without rows`,
     columns: [
       { name: design.roles.participant, numeric: false },
-      { name: 'condition', numeric: false },
+      ...(design.hidden ? [] : [{ name: 'condition', numeric: false }]),
     ],
-    rows: design.missingCells.map((each) => [each.participant, each.condition]),
+    rows: design.missingCells.map((each) => (design.hidden ? [each.participant] : [each.participant, each.condition])),
   };
 }
 

@@ -28,16 +28,16 @@ export function reshapeSentence(settings: ReshapeSettings, context: Context): Pa
   );
   const table = context.given.table as Table | undefined;
   return settings.to === 'long'
-    ? [direction, ' ', ...toLongParts(settings, table), '.']
-    : [direction, ' ', ...toWideParts(settings, table), '.'];
+    ? [direction, ' ', ...toLongParts(settings, table, context.blind), '.']
+    : [direction, ' ', ...toWideParts(settings, table, context.blind), '.'];
 }
 
-function toLongParts(settings: ReshapeSettings, table: Table | undefined): Part[] {
+function toLongParts(settings: ReshapeSettings, table: Table | undefined, blind?: boolean): Part[] {
   return [
     choicesBlank(
       { key: 'columns', label: 'columns that become rows' },
       settings.columns,
-      columnOptions(table),
+      columnOptions(table, undefined, blind),
       { prompt: 'which columns', atLeast: 2 },
       (columns) => ({ ...settings, columns }),
     ),
@@ -54,12 +54,12 @@ function toLongParts(settings: ReshapeSettings, table: Table | undefined): Part[
   ];
 }
 
-function toWideParts(settings: ReshapeSettings, table: Table | undefined): Part[] {
+function toWideParts(settings: ReshapeSettings, table: Table | undefined, blind?: boolean): Part[] {
   return [
     choiceBlank(
       { key: 'by', label: 'column whose levels become columns' },
       settings.by,
-      columnOptions(table),
+      columnOptions(table, undefined, blind),
       'which condition',
       (by) => ({ ...settings, by }),
     ),
@@ -67,7 +67,7 @@ function toWideParts(settings: ReshapeSettings, table: Table | undefined): Part[
     choiceBlank(
       { key: 'value', label: 'column that is spread out' },
       settings.value,
-      columnOptions(table),
+      columnOptions(table, undefined, blind),
       'what',
       (value) => ({ ...settings, value }),
     ),
@@ -75,7 +75,7 @@ function toWideParts(settings: ReshapeSettings, table: Table | undefined): Part[
     choicesBlank(
       { key: 'id', label: 'columns that tell rows apart' },
       settings.id,
-      columnOptions(table),
+      columnOptions(table, undefined, blind),
       { prompt: 'which participant', atLeast: 1 },
       (id) => ({ ...settings, id }),
     ),

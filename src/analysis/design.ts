@@ -1,5 +1,6 @@
 import { Refusal } from '../data/refusal.ts';
 import { asLevels, type Column, columnOf, type Table, textAt } from '../data/table.ts';
+import type { HiddenConditions } from './hidden-design.ts';
 import type { Rule, RuleStep } from './rules.ts';
 
 /** Which column plays which part, as the researcher states it. */
@@ -46,6 +47,8 @@ export interface Design {
   /** The exclusion rules applied so far, in order, and what each set aside. */
   readonly rules: readonly Rule[];
   readonly steps: readonly RuleStep[];
+  /** Set while the conditions are hidden: no row's level can then be read from the design (hidden-design.ts). */
+  readonly hidden?: HiddenConditions;
 }
 
 /** Scores beyond this cannot be squared and summed in double precision. */
@@ -57,12 +60,13 @@ const LARGEST_SCORE = 1e150;
  *
  * @param table rows as read or reshaped
  * @param roles which column plays which part; every named column must be in the table
+ * @param quiet whether refusals must name no level, because the conditions are hidden
  * @returns the design with every complete row kept
  * @throws Refusal where a column is missing or of the wrong type, a participant stands in two groups, or rows repeat
  *   although one score each was stated
  * @source participant flow: Hopewell et al. 2025 (CONSORT), items 20-22; a participant in two groups: methods R9
  */
-export function declareDesign(table: Table, roles: Roles): Design {
+export function declareDesign(table: Table, roles: Roles, quiet = false): Design {
   const participantColumn = needColumn(table, roles.participant, 'participant');
   const outcome = outcomeValues(table, roles.outcome);
   const { codes: participant, levels: participants } = asLevels(participantColumn);
@@ -71,7 +75,7 @@ export function declareDesign(table: Table, roles: Roles): Design {
     ...roles.between.map((name) => readFactor(table, name, 'between')),
   ];
   for (const factor of factors) {
-    if (factor.scope === 'between') refuseTwoGroups(factor, participant, participants, table, roles.participant);
+    if (factor.scope === 'between') refuseTwoGroups(factor, participant, participants, table, roles.participant, quiet);
   }
   const kept = new Uint8Array(table.rows);
   let missingRows = 0;
@@ -97,7 +101,7 @@ export function declareDesign(table: Table, roles: Roles): Design {
     steps: [],
   };
   const rows = rowsPerCell(design);
-  if (roles.rows === 'one score') refuseRepeats(design, rows);
+  if (roles.rows === 'one score') refuseRepeats(design, rows, quiet);
   return { ...design, missingCells: findMissingCells(design, rows) };
 }
 
@@ -201,6 +205,7 @@ function refuseTwoGroups(
   participants: readonly string[],
   table: Table,
   noun: string,
+  quiet: boolean,
 ): void {
   const firstRow = new Int32Array(participants.length).fill(-1);
   for (let row = 0; row < participant.length; row++) {
@@ -210,6 +215,11 @@ function refuseTwoGroups(
     const first = firstRow[who] as number;
     if (first < 0) firstRow[who] = row;
     else if (factor.codes[first] !== level) {
+      if (quiet) {
+        throw new Refusal(
+          `A ${noun} stands in two groups of ${factor.name}. A participant can be in one group only: correct the file, or state ${factor.name} as a condition that every participant met. Which one, and where, is told once the conditions are open.`,
+        );
+      }
       throw new Refusal(
         `${noun} ${participants[who]} stands in two groups of ${factor.name}: "${factor.levels[factor.codes[first] as number]}" in row ${table.origin[first]} and "${factor.levels[level]}" in row ${table.origin[row]}. ` +
           `A participant can be in one group only: correct the file, or state ${factor.name} as a condition that every participant met.`,
@@ -231,10 +241,15 @@ function rowsPerCell(design: Design): Int32Array {
   return rows;
 }
 
-function refuseRepeats(design: Design, rows: Int32Array): void {
+function refuseRepeats(design: Design, rows: Int32Array, quiet: boolean): void {
   const conditions = withinConditions(design);
   const cell = rows.findIndex((count) => count > 1);
   if (cell < 0) return;
+  if (quiet) {
+    throw new Refusal(
+      `A ${design.roles.participant} has several rows under one condition, but one score each was stated. If the rows are trials, say "several trials": they are then scored per participant before any test. Otherwise correct the file.`,
+    );
+  }
   const who = Math.floor(cell / conditions.length);
   const where = cell % conditions.length;
   const condition = withinCondition(design);

@@ -1,6 +1,6 @@
 import { type Context, type Kind, plainSentence, type Registry, type SharedNumber } from '../../cells/kind.ts';
 import type { Cell } from '../worksheet/format.ts';
-import { computedOf, titleOf } from './cell-model.ts';
+import { titleOf } from './cell-model.ts';
 import { sharedSentence } from './change-sentence.ts';
 import * as edits from './edits.ts';
 import { move, moveBy } from './move.ts';
@@ -29,19 +29,10 @@ export function focusCell(id: string): void {
   focusOn(`[data-cell="${id}"]`);
 }
 
-/** Values above a cell that is about to be added, for its defaults. */
-function contextFrom(page: Page, from: { readonly [port: string]: string }): Context {
-  const given: { [port: string]: never } = {};
-  for (const [port, id] of Object.entries(from)) {
-    const value = computedOf(page.parts.engine.state(id))?.value;
-    if (value !== undefined) given[port] = value as never;
-  }
-  return { shared: page.worksheet.shared, given, data: page.worksheet.data };
-}
-
 export function addCell(page: Page, after: string | null, kind: Kind): void {
   const { document: open, registry } = page.parts;
-  const added = edits.addAfter(page.worksheet, registry, after, kind, (from) => contextFrom(page, from));
+  const over = (from: Cell['from']): Context => page.parts.engine.contextOver(from);
+  const added = edits.addAfter(page.worksheet, registry, after, kind, over);
   if (added === null) return;
   open.edit(`${titleOf(registry, cellOf(added.worksheet, added.id) as Cell)} added`, () => added.worksheet);
   page.show({ panel: null });

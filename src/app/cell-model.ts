@@ -38,10 +38,18 @@ function sameShared(a: readonly SharedNumber[], b: readonly SharedNumber[], sett
   return true;
 }
 
+function sameAbove(a: Context['above'], b: Context['above']): boolean {
+  const ports = Object.keys(b ?? {});
+  return ports.length === Object.keys(a ?? {}).length && ports.every((port) => a?.[port] === b?.[port]);
+}
+
 function sameContext(a: Context, b: Context, settings: unknown): boolean {
   const ports = Object.keys(b.given);
   return (
     a.own === b.own &&
+    a.blind === b.blind &&
+    a.design === b.design &&
+    sameAbove(a.above, b.above) &&
     a.data.length === b.data.length &&
     a.data.every((block, i) => block.id === b.data[i]?.id && block.name === b.data[i]?.name) &&
     ports.length === Object.keys(a.given).length &&

@@ -188,6 +188,7 @@ export class CellRun {
         return block;
       },
       seed: running.key.seed,
+      ...(running.key.blind ? { blind: true } : {}),
     };
   }
 
@@ -273,6 +274,7 @@ export function contextOf(worksheet: Worksheet, given: { readonly [port: string]
     shared: worksheet.shared,
     given: given as Context['given'],
     data: worksheet.data.map(({ id, name }) => ({ id, name })),
+    ...(worksheet.opening.state === 'blind' ? { blind: true } : {}),
   };
 }
 

@@ -5,6 +5,7 @@ import type { Worksheet } from '../worksheet/format.ts';
 import { CellRun, contextOf, type Host } from './cell-run.ts';
 import type { CellState, Outcome } from './cell-state.ts';
 import { Gate } from './gate.ts';
+import { nearestDesign } from './nearest-design.ts';
 import { type CellPlan, planCells, samePlan } from './plan.ts';
 import { resolveShared, sharedIdsIn } from './shared-references.ts';
 import { type Changed, changeOf, onlyNumbersDiffer } from './worksheet-difference.ts';
@@ -102,10 +103,22 @@ export class Engine {
   /** What the cell's sentence may look at: the newest record, and what the cell and those above it last came to. */
   context(cellId: string): Context {
     const { plan, last } = this.#entry(cellId).run;
-    const given: Record<string, unknown> = {};
-    for (const { port, from } of plan.ports) given[port] = this.#valueOf(from);
-    const context = contextOf(this.#record(this.#latest), given);
+    const context = this.contextOver(Object.fromEntries(plan.ports.map(({ port, from }) => [port, from])));
     return last === null ? context : { ...context, own: last };
+  }
+
+  /** What a cell that reads these cells (port -> id) may look at. */
+  contextOver(from: { readonly [port: string]: string }): Context {
+    const worksheet = this.#record(this.#latest);
+    const given: Record<string, unknown> = {};
+    const above: Record<string, Settings> = {};
+    for (const [port, id] of Object.entries(from)) {
+      given[port] = this.#valueOf(id);
+      const cell = worksheet.cells.find((each) => each.id === id);
+      if (cell !== undefined) above[port] = cell.settings;
+    }
+    const design = nearestDesign(worksheet, this.#options.registry, Object.values(from), (id) => this.#valueOf(id));
+    return { ...contextOf(worksheet, given), above, ...(design === undefined ? {} : { design }) };
   }
 
   /** The cell's settings with every shared number replaced by its value now; one that does not exist counts as none. */
