@@ -4,6 +4,7 @@ import type { CheckLayout } from '../analysis/checks-layout.ts';
 import type { ClaimSpec } from '../analysis/claim.ts';
 import type { Result } from '../analysis/compare.ts';
 import { compareSamples } from '../analysis/compare.ts';
+import { type RelabelSpec, relabelRates } from '../analysis/error-rates.ts';
 import { type BlindScores, flagExtremeBlind } from '../analysis/flagging.ts';
 import { findInfluence, type InfluenceSpec } from '../analysis/influence.ts';
 import { countJoint } from '../analysis/joint.ts';
@@ -11,6 +12,7 @@ import { type JointPlan, planJoint } from '../analysis/joint-plan.ts';
 import { compareLevels } from '../analysis/omnibus.ts';
 import { runPipeline } from '../analysis/pipeline.ts';
 import type { ExtremeRule } from '../analysis/rules.ts';
+import { type SimulationSpec, simulate } from '../analysis/simulate.ts';
 import { sweepClaim } from '../analysis/sweep.ts';
 import { longWork } from './long-work.ts';
 import type { JobEnv } from './runner.ts';
@@ -35,6 +37,14 @@ export const jobs = {
     args: { readonly result: Result; readonly claim: ClaimSpec; readonly spec: InfluenceSpec },
     env: JobEnv,
   ) => findInfluence(args, longWork(env)),
+  /** Some relabellings of a chain by several rules (analysis/error-rates.ts). */
+  relabelRates: (
+    args: { readonly result: Result; readonly spec: RelabelSpec; readonly from: number; readonly to: number },
+    env: JobEnv,
+  ) => relabelRates(args, longWork(env)),
+  /** Some simulated experiments (analysis/simulate.ts). */
+  simulate: (args: { readonly spec: SimulationSpec; readonly from: number; readonly to: number }, env: JobEnv) =>
+    simulate(args.spec, args.from, args.to, longWork(env)),
   /** What a comparison assumes, with what the checks could have shown (analysis/checks.ts). */
   checks: (args: { readonly layout: CheckLayout; readonly options: CheckOptions }, env: JobEnv) =>
     checkAssumptions(args.layout, args.options, stepOf(env)),
