@@ -4,6 +4,7 @@ import { comparisonKind } from './comparison/kind.ts';
 import { dataKind } from './data/kind.ts';
 import { deriveKind } from './derive/kind.ts';
 import { designKind } from './design/kind.ts';
+import { errorRatesKind } from './error-rates/kind.ts';
 import { exclusionKind } from './exclusion/kind.ts';
 import { guardAll } from './guard.ts';
 import { influenceKind } from './influence/kind.ts';
@@ -26,6 +27,7 @@ export const registry = guardAll({
   association: associationKind,
   claim: claimKind,
   influence: influenceKind,
+  'error-rates': errorRatesKind,
   note: noteKind,
   standing: standingKind,
   joint: jointKind,

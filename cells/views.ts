@@ -2,6 +2,7 @@ import { nothing, type TemplateResult } from 'lit';
 import { associationView } from './association/view.ts';
 import { claimView } from './claim/view.ts';
 import { comparisonView } from './comparison/view.ts';
+import { ratesView } from './error-rates/view.ts';
 import { exclusionView } from './exclusion/view.ts';
 import { influenceView } from './influence/view.ts';
 import type { Computed, ViewContext } from './kind.ts';
@@ -28,6 +29,7 @@ export const views: Readonly<Record<KindName, View>> = {
   association: associationView,
   claim: claimView,
   influence: influenceView,
+  'error-rates': ratesView,
   note: noteView,
   standing: standingView,
   joint: plain,
