@@ -1,4 +1,5 @@
 import { associationKind } from './association/kind.ts';
+import { assumptionsKind } from './assumptions/kind.ts';
 import { claimKind } from './claim/kind.ts';
 import { comparisonKind } from './comparison/kind.ts';
 import { dataKind } from './data/kind.ts';
@@ -23,6 +24,7 @@ export const registry = guardAll({
   design: designKind,
   exclusion: exclusionKind,
   score: scoreKind,
+  assumptions: assumptionsKind,
   comparison: comparisonKind,
   association: associationKind,
   claim: claimKind,

@@ -1,5 +1,6 @@
 import { nothing, type TemplateResult } from 'lit';
 import { associationView } from './association/view.ts';
+import { assumptionsView } from './assumptions/view.ts';
 import { claimView } from './claim/view.ts';
 import { comparisonView } from './comparison/view.ts';
 import { ratesView } from './error-rates/view.ts';
@@ -25,6 +26,7 @@ export const views: Readonly<Record<KindName, View>> = {
   design: plain,
   exclusion: exclusionView,
   score: scoreView,
+  assumptions: assumptionsView,
   comparison: comparisonView,
   association: associationView,
   claim: claimView,

@@ -148,6 +148,24 @@ export const CAUTIONS = {
       `Where bootstrap is named, ${text(f, 'resamples')} resamples were drawn with seed ${text(f, 'seed')}.`,
     source: 'Efron & Tibshirani 1993',
   },
+  R6: {
+    action: 'refuse',
+    sentence: (f) =>
+      `With two levels (${text(f, 'levels')}) there is one difference only, and nothing for its spread to be compared with: Mauchly\u2019s test and \u03b5 are not defined. Look at the differences themselves.`,
+    source: 'Huynh & Feldt 1970; methods 3.9, R6',
+  },
+  R7: {
+    action: 'refuse',
+    sentence: () =>
+      'Its tables are for a curve that was fixed beforehand; with mean and SD taken from the same scores it finds next to nothing (at a nominal .05 it rejected no normal sample of 10 to 50 scores, simulated). Lilliefors is the same distance with the tables that fit.',
+    source: 'Lilliefors 1967; levels simulated, methods 3.9, R7',
+  },
+  R8: {
+    action: 'refuse',
+    sentence: (f) =>
+      `Raw scores are never pooled over ${text(f, 'what')}: two groups four SDs apart, each from a normal population, look far from normal together in 77 % of studies, their residuals in 5 % (simulated). What is drawn here is ${text(f, 'drawn')}.`,
+    source: 'simulated, methods 3.9, R8',
+  },
   BLINDCUT: {
     action: 'say',
     sentence: (f) =>

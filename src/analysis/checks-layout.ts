@@ -1,5 +1,5 @@
 import { Refusal } from '../data/refusal.ts';
-import type { Factor } from './design.ts';
+import { type Factor, participantNoun } from './design.ts';
 import type { Scores } from './score.ts';
 
 /** What is looked at: some levels of one factor, the participants taken together or apart by another factor. */
@@ -14,6 +14,11 @@ export interface CheckTarget {
 
 /** Participants in file order, each with a score in every column, in the outcome's unit. */
 export interface CheckLayout {
+  readonly target: CheckTarget;
+  /** The outcome, its unit ("" for none), and the word for one participant. */
+  readonly outcome: string;
+  readonly unit: string;
+  readonly noun: string;
   readonly participants: readonly string[];
   /** Levels within participants, two or more; one column with an empty name where nothing varies within. */
   readonly columns: readonly string[];
@@ -56,7 +61,7 @@ export function takeCheckLayout(scores: Scores, target: CheckTarget): CheckLayou
     if (own.some(Number.isNaN)) left.push({ participant, why: 'no kept score under one of the conditions' });
     else entered.push({ who, code, own });
   });
-  const layout = gather(scores, columns, groupNames(sides), entered, left);
+  const layout = { ...named(scores, target), ...gather(scores, columns, groupNames(sides), entered), left };
   refuseFew(layout);
   return layout;
 }
@@ -66,13 +71,17 @@ interface Side {
   readonly levels: readonly string[];
 }
 
+function named({ design }: Scores, target: CheckTarget) {
+  const { roles } = design;
+  return { target, outcome: roles.outcome, unit: roles.unit, noun: participantNoun(roles) };
+}
+
 function gather(
   scores: Scores,
   columns: readonly { readonly name: string }[],
   names: readonly string[],
   entered: readonly { who: number; code: number; own: number[] }[],
-  left: CheckLayout['left'],
-): CheckLayout {
+) {
   const present = names.map((_, code) => code).filter((code) => entered.some((each) => each.code === code));
   return {
     participants: entered.map(({ who }) => scores.participants[who] as string),
@@ -80,7 +89,6 @@ function gather(
     groups: present.map((code) => names[code] as string),
     group: Int32Array.from(entered, ({ code }) => present.indexOf(code)),
     values: Float64Array.from(entered.flatMap(({ own }) => own)),
-    left,
   };
 }
 

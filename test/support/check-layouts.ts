@@ -9,6 +9,10 @@ export function layoutOf(
   more: { readonly columns?: readonly string[]; readonly groups?: readonly string[]; readonly group?: number[] } = {},
 ): CheckLayout {
   return {
+    target: { factor: 'f', levels: [], by: '' },
+    outcome: 'y',
+    unit: '',
+    noun: 'participant',
     participants: rows.map((_, who) => `p${who + 1}`),
     columns: more.columns ?? (rows[0] ?? []).map((_, column) => `c${column + 1}`),
     groups: more.groups ?? [''],
