@@ -1,11 +1,13 @@
 import { deriveColumn } from '../../src/data/derive/derive-column.ts';
 import { filterRows } from '../../src/data/derive/filter-rows.ts';
-import { applyFunction } from '../../src/data/derive/named-functions.ts';
+import { applyFunction, type NamedFunction } from '../../src/data/derive/named-functions.ts';
+import { applyPower, type PowerEstimate, type PowerTransform } from '../../src/data/derive/power-transform.ts';
 import { recode } from '../../src/data/derive/recode.ts';
 import type { Table } from '../../src/data/table.ts';
 import { type Context, defineKind, type Note } from '../kind.ts';
 import { count, counted } from '../numbers.ts';
-import { type DeriveSettings, deriveSentence, type FUNCTIONS, type OPERATIONS, readMap } from './sentence.ts';
+import { scaleNotes } from './notes.ts';
+import { type DeriveSettings, deriveSentence, type OPERATIONS, readMap } from './sentence.ts';
 
 export interface DeriveDetail {
   readonly rowsBefore: number;
@@ -14,6 +16,8 @@ export interface DeriveDetail {
   readonly warnings: readonly string[];
   /** Whether the conditions are hidden: nothing is told of single values then. */
   readonly hidden?: boolean;
+  /** Box-Cox and Yeo-Johnson: the exponent, and from how many values. Not there while the conditions are hidden. */
+  readonly power?: PowerEstimate;
 }
 
 const QUIET: Note = {
@@ -29,13 +33,15 @@ export const deriveKind = defineKind<DeriveSettings, { readonly table: 'table' }
   offer: 'Let a new column be made, or keep some rows only',
   takes: { table: 'table' },
   gives: 'table',
-  blind: ({ value, detail }) => ({ value, detail: { ...detail, warnings: [], hidden: true } }),
+  // In a wide file a column is a condition, and so would its exponent be.
+  blind: ({ value, detail: { power: _, ...detail } }) => ({ value, detail: { ...detail, warnings: [], hidden: true } }),
   defaults: (context) => defaultSettings(context),
   check: checkSettings,
   compute(settings, { table }) {
     if (settings.make === 'filter') return keepRows(settings, table);
-    const made = makeColumn(settings, table);
-    return { value: made.table, detail: { rowsBefore: table.rows, dropped: null, warnings: made.warnings } };
+    const { power, ...made } = makeColumn(settings, table);
+    const detail = { rowsBefore: table.rows, dropped: null, warnings: made.warnings };
+    return { value: made.table, detail: power === undefined ? detail : { ...detail, power } };
   },
   sentence: deriveSentence,
   say: ({ value, detail }) =>
@@ -46,16 +52,25 @@ export const deriveKind = defineKind<DeriveSettings, { readonly table: 'table' }
     detail.dropped === null || detail.dropped === 0
       ? {}
       : { count: value.rows, label: 'rows', setAside: detail.dropped },
-  notes: ({ detail }) =>
-    detail.hidden === true ? [QUIET] : detail.warnings.map((text) => ({ type: 'caution', text })),
+  notes: ({ detail }, settings) => [
+    ...(detail.hidden === true ? [QUIET] : detail.warnings.map((text): Note => ({ type: 'caution', text }))),
+    ...scaleNotes(settings, detail),
+  ],
   record: ({ value, detail }) => ({
     rows: value.rows,
     dropped: detail.dropped,
     columns: value.columns.map((each) => each.name),
+    ...(detail.power === undefined ? {} : { lambda: detail.power.lambda, values: detail.power.n }),
   }),
 });
 
-function makeColumn(settings: DeriveSettings, table: Table): { table: Table; warnings: readonly string[] } {
+interface Made {
+  readonly table: Table;
+  readonly warnings: readonly string[];
+  readonly power?: PowerEstimate;
+}
+
+function makeColumn(settings: DeriveSettings, table: Table): Made {
   const name = settings.name.trim();
   if (settings.make === 'formula') return deriveColumn(table, { name, formula: settings.formula });
   if (settings.make === 'recode') {
@@ -66,7 +81,12 @@ function makeColumn(settings: DeriveSettings, table: Table): { table: Table; war
       otherwise: 'keep',
     });
   }
-  return applyFunction(table, { name, fn: settings.fn as (typeof FUNCTIONS)[number], of: settings.of });
+  if (isPower(settings.fn)) return applyPower(table, { name, fn: settings.fn, of: settings.of });
+  return applyFunction(table, { name, fn: settings.fn as NamedFunction, of: settings.of });
+}
+
+function isPower(fn: string): fn is PowerTransform {
+  return fn === 'Box-Cox power' || fn === 'Yeo-Johnson power';
 }
 
 function keepRows(settings: DeriveSettings, table: Table) {

@@ -28,6 +28,8 @@ export const FUNCTIONS = [
   'absolute value',
   'rank',
   'z score pooled',
+  'Box-Cox power',
+  'Yeo-Johnson power',
 ] as const;
 export const OPERATIONS = [
   'is at least',
@@ -71,7 +73,7 @@ function letParts(settings: DeriveSettings, table: Table | undefined, blind?: bo
       ...FUNCTIONS.map((fn) => ({
         value: fn,
         label: `the ${fn === 'z score pooled' ? 'pooled z score' : fn}`,
-        hint: 'of one column',
+        hint: fn.endsWith('power') ? 'of one column; the exponent from all its values together' : 'of one column',
       })),
       { value: 'formula', label: 'the formula', hint: 'arithmetic on columns' },
       { value: 'recode', label: 'a recoding', hint: 'of the values of one column' },
