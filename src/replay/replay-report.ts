@@ -12,7 +12,7 @@ export interface ReplayAbout {
 export function replayText({ file, worksheet, replayed, exit }: ReplayAbout): string {
   const { breaks, cells, gone } = replayed;
   const lines = [`${file}: "${worksheet.title}", recorded by Standfast ${worksheet.program.version}`];
-  lines.push(...breaks.map((sentence) => `BROKEN  ${sentence}`));
+  lines.push(...(breaks.length === 0 ? [wholeWords(worksheet)] : breaks.map((sentence) => `BROKEN  ${sentence}`)));
   for (const cell of cells) lines.push(...cellLines(cell, worksheet));
   lines.push(...gone.map((id) => `DIFFERS  A result is recorded for "${id}", but there is no such cell.`));
   const compared = cells.reduce((sum, cell) => sum + cell.compared, 0);
@@ -20,6 +20,14 @@ export function replayText({ file, worksheet, replayed, exit }: ReplayAbout): st
   if (exit === 0) lines.push(`Everything came out again: ${counted(same, 'cell')}, ${counted(compared, 'value')}.`);
   else lines.push(`${same} of ${counted(cells.length, 'cell')} came out again; see above.`);
   return `${lines.join('\n')}\n`;
+}
+
+function wholeWords({ log, data }: Worksheet): string {
+  const last = log.at(-1);
+  const count = `${log.length} ${log.length === 1 ? 'entry' : 'entries'}`;
+  const chain =
+    last === undefined ? 'The decision log is empty' : `The decision log is whole (${count}, the last ${last.hash})`;
+  return data.length === 0 ? `${chain}.` : `${chain}, and the data are those that were read.`;
 }
 
 /** The replay as JSON for programs. */
