@@ -79,7 +79,11 @@ export function togetherParts(
   const columns = choicesBlank(
     { key: 'columns', label: 'columns judged together' },
     settings.columns ?? [],
-    columnOptions(design?.table, (column) => numbersOnly(column) ?? tellsApart(column, design)),
+    columnOptions(
+      design?.table,
+      (column) => numbersOnly(column) ?? tellsApart(column, design),
+      design?.hidden !== undefined,
+    ),
     { prompt: 'which columns', atLeast: 2 },
     (chosen) => ({ ...settings, columns: chosen }),
   );
@@ -131,7 +135,7 @@ function scopeBlank(settings: ExclusionSettings, design: Design | undefined): Bl
   return choiceBlank(
     { key: 'scope', label: 'scores the distance is measured among' },
     settings.scope,
-    options,
+    design?.hidden ? options.filter(({ value }) => !value.includes('condition') || value === settings.scope) : options,
     'all scores',
     (scope) => ({
       ...settings,

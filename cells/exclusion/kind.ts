@@ -5,6 +5,7 @@ import { OWN_CUTOFF, type Rule } from '../../src/analysis/rules.ts';
 import { defineKind, type Num, numberOf } from '../kind.ts';
 import { count, counted, plural } from '../numbers.ts';
 import { WITHIN } from './distances.ts';
+import { hiddenProblems, hiddenRecord, keptRows } from './hidden.ts';
 import { exclusionNotes } from './notes.ts';
 import { type ExclusionSettings, exclusionSentence } from './sentence.ts';
 import { countTable, listTable } from './tables.ts';
@@ -40,7 +41,7 @@ export const exclusionKind = defineKind<ExclusionSettings, { readonly design: 'd
     scope: 'participant',
     least: 70,
   }),
-  check: (settings) => checkSettings(settings),
+  check: (settings, context) => [...hiddenProblems(settings, context), ...checkSettings(settings)],
   compute(settings, { design }, env) {
     const rule = ruleOf(settings, design);
     if (rule.rule === 'extreme' && rule.measure === 'MCD') {
@@ -87,9 +88,11 @@ export const exclusionKind = defineKind<ExclusionSettings, { readonly design: 'd
     };
   },
   notes: ({ value, detail }) => exclusionNotes(value, detail),
-  tables: ({ value, detail }) => [...(value.factors.length > 0 ? [countTable(value, detail)] : []), listTable(value)],
+  tables: ({ value, detail }) =>
+    value.hidden ? [] : [...(value.factors.length > 0 ? [countTable(value, detail)] : []), listTable(value)],
   record({ value, detail }) {
     const step = value.steps.at(-1);
+    if (value.hidden) return hiddenRecord(value);
     return {
       setAside: Array.from(step?.rows ?? [], (row) => value.table.origin[row] as number),
       participants: step?.participants ?? [],
@@ -98,13 +101,6 @@ export const exclusionKind = defineKind<ExclusionSettings, { readonly design: 'd
     };
   },
 });
-
-/** Rows still in. */
-function keptRows(design: Design): number {
-  let kept = 0;
-  for (const mark of design.kept) kept += mark;
-  return kept;
-}
 
 function sameMarks(a: Uint8Array, b: Uint8Array): boolean {
   return a.length === b.length && a.every((mark, row) => mark === b[row]);

@@ -1,6 +1,7 @@
 import { cautionText } from '../../src/analysis/cautions.ts';
 import { type Design, fullCondition, participantNoun } from '../../src/analysis/design.ts';
 import { type ExtremeRule, readsCondition } from '../../src/analysis/rules.ts';
+import { scopeWords } from '../../src/analysis/scope-blindness.ts';
 import type { Note } from '../kind.ts';
 import { count, counted, fixed, percent } from '../numbers.ts';
 import type { ExclusionDetail } from './kind.ts';
@@ -11,8 +12,12 @@ export function exclusionNotes(design: Design, detail: ExclusionDetail): Note[] 
   const notes: Note[] = [];
   const factors = design.factors.map((factor) => factor.name).join(' or ') || 'condition';
   if (rule.rule !== 'named' && !readsCondition(rule)) {
-    notes.push({ type: 'note', lead: 'Blind.', text: cautionText('BLINDCUT', { condition: factors }), id: 'BLINDCUT' });
+    const later = design.hidden ? ` The counts by ${factors} are shown once the conditions are open.` : '';
+    const text = `${cautionText('BLINDCUT', { condition: factors })}${later}`;
+    notes.push({ type: 'note', lead: 'Blind.', text, id: 'BLINDCUT' });
   }
+  const uses = readsCondition(rule) ? scopeWords(rule, design.factors) : null;
+  if (uses !== null) notes.push({ type: 'note', lead: 'What it uses.', text: uses });
   if (rule.rule === 'extreme') notes.push(...extremeNotes(design, detail, rule, factors));
   notes.push(...shareNotes(design, detail));
   if (rule.rule === 'extreme') notes.push({ type: 'note', lead: 'Conventions.', text: conventions(rule) });
@@ -51,7 +56,8 @@ function spreadNotes(design: Design, detail: ExclusionDetail, rule: ExtremeRule,
   if (flat.length > 0) {
     const named = flat.slice(0, 3).map((each) => design.participants[each.scope]);
     const more = flat.length > 3 ? ` and ${flat.length - 3} more` : '';
-    const names = rule.scope === 'participant' && rule.on === 'trial' ? `For ${named.join(', ')}${more} ` : 'Here ';
+    const who = design.hidden ? counted(flat.length, participantNoun(design.roles)) : `${named.join(', ')}${more}`;
+    const names = rule.scope === 'participant' && rule.on === 'trial' ? `For ${who} ` : 'Here ';
     const side = flat.every((each) => each.reason?.endsWith('equal to it')) ? 'on one side of the median ' : '';
     notes.push({
       type: 'caution',

@@ -1,4 +1,5 @@
 import { type Design, participantNoun } from '../../src/analysis/design.ts';
+import { sortedLevels } from '../../src/analysis/hidden-design.ts';
 import type { Measure, Scope } from '../../src/analysis/rules.ts';
 import type { Column, Table } from '../../src/data/table.ts';
 import { choiceBlank, choicesBlank, columnOptions, numberBlank, numbersOnly, textBlank } from '../blanks.ts';
@@ -120,10 +121,16 @@ function namesBlank(settings: ExclusionSettings, design: Design | undefined): Bl
   return choicesBlank(
     { key: 'participants', label: 'participants by name' },
     settings.participants,
-    (design?.participants ?? []).map((name) => ({ value: name, label: name })),
+    namesOffered(design).map((name) => ({ value: name, label: name })),
     { prompt: 'which', atLeast: 1 },
     (participants) => ({ ...settings, participants }),
   );
+}
+
+/** While the conditions are hidden the order of the file is not shown: it may follow the groups. */
+function namesOffered(design: Design | undefined): readonly string[] {
+  const names = design?.participants ?? [];
+  return design?.hidden ? sortedLevels(names) : names;
 }
 
 function reasonBlank(settings: ExclusionSettings): Blank {
@@ -140,7 +147,7 @@ function columnBlank(settings: ExclusionSettings, design: Design | undefined): B
   return choiceBlank(
     { key: 'column', label: 'column judged' },
     settings.column || roles?.outcome || null,
-    columnOptions(table, fits),
+    columnOptions(table, fits, design?.hidden !== undefined),
     'which column',
     (column) => ({ ...settings, column: column === roles?.outcome ? '' : column }),
   );
