@@ -38,7 +38,44 @@ bootstrap_t_r <- function(n, b) {
   }
 }
 
-work_of <- list(bootstrap_boot = bootstrap_boot, bootstrap_t_r = bootstrap_t_r)
+error_rates_r <- function(experiments, b) {
+  n <- 20
+  welch <- function(x, y) (mean(x) - mean(y)) / sqrt(var(x) / n + var(y) / n)
+  one <- function(x, y) {
+    p <- yuen_parts(x)
+    q <- yuen_parts(y)
+    own <- p[1] - q[1]
+    se <- sqrt(p[2] + q[2])
+    df <- (p[2] + q[2])^2 / (p[2]^2 / 11 + q[2]^2 / 11)
+    d <- numeric(b)
+    t <- numeric(b)
+    apart <- numeric(b)
+    student <- numeric(b)
+    both <- c(x, y)
+    for (i in seq_len(b)) {
+      u <- yuen_parts(sample(x, n, replace = TRUE))
+      v <- yuen_parts(sample(y, n, replace = TRUE))
+      d[i] <- u[1] - v[1]
+      t[i] <- abs(d[i] - own) / sqrt(u[2] + v[2])
+      mixed <- sample(both)
+      apart[i] <- abs(mean(mixed[1:n]) - mean(mixed[(n + 1):(2 * n)]))
+      student[i] <- abs(welch(mixed[1:n], mixed[(n + 1):(2 * n)]))
+    }
+    c(
+      t.test(x, y, var.equal = TRUE)$p.value <= 0.05,
+      t.test(x, y)$p.value <= 0.05,
+      2 * pt(-abs(own) / se, df) <= 0.05,
+      wilcox.test(x, y)$p.value <= 0.05,
+      2 * min(mean(d < 0), mean(d > 0)) <= 0.05,
+      (sum(t >= abs(own) / se) + 1) / (b + 1) <= 0.05,
+      (sum(apart >= abs(mean(x) - mean(y))) + 1) / (b + 1) <= 0.05,
+      (sum(student >= abs(welch(x, y))) + 1) / (b + 1) <= 0.05
+    )
+  }
+  function() rowMeans(replicate(experiments, one(rnorm(n), rnorm(n))))
+}
+
+work_of <- list(bootstrap_boot = bootstrap_boot, bootstrap_t_r = bootstrap_t_r, error_rates_r = error_rates_r)
 
 input <- file("stdin", "r")
 while (length(line <- readLines(input, n = 1)) > 0) {
