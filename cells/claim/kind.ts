@@ -1,7 +1,7 @@
 import { type ClaimSpec, type ClaimValue, claimWords, verdictOf } from '../../src/analysis/claim.ts';
 import type { Result } from '../../src/analysis/compare.ts';
 import { type Context, defineKind, type Note, numberOf, Refusal } from '../kind.ts';
-import { type ClaimSettings, claimSentence } from './sentence.ts';
+import { type ClaimSettings, claimSentence, comparedPair } from './sentence.ts';
 
 /** What is claimed of the comparison, and what its planned row says of it. */
 export const claimKind = defineKind<ClaimSettings, { readonly result: 'result' }, 'claim', null>({
@@ -87,14 +87,22 @@ function claimNotes(value: ClaimValue): Note[] {
 
 function defaultSettings(context: Context): ClaimSettings {
   const result = context.given.result as Result | undefined;
-  const direction = result?.scores.design.roles.direction;
-  const estimate = result?.findings[result.planned]?.estimate ?? 0;
-  const relation = direction === 'neither' || direction === undefined ? 'different' : estimate < 0 ? 'lower' : 'higher';
+  if (result === undefined) return unseenSettings(context);
+  const { direction } = result.scores.design.roles;
+  const estimate = result.findings[result.planned]?.estimate ?? 0;
+  const relation = direction === 'neither' ? 'different' : estimate < 0 ? 'lower' : 'higher';
   return {
-    first: result?.comparison.first ?? '',
+    first: result.comparison.first,
     relation,
-    second: result?.comparison.second ?? '',
+    second: result.comparison.second,
     margin: 0,
     title: '',
   };
+}
+
+/** A claim about a comparison that is veiled or not there yet: its two conditions, in the direction that is better. */
+function unseenSettings(context: Context): ClaimSettings {
+  const [first, second] = comparedPair(context);
+  const direction = context.design?.roles.direction ?? 'neither';
+  return { first, relation: direction === 'neither' ? 'different' : direction, second, margin: 0, title: '' };
 }

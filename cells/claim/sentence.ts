@@ -11,11 +11,23 @@ export type ClaimSettings = {
   readonly title: string;
 };
 
+/** The two conditions of the comparison above; where it is veiled or not there yet, as its sentence names them. */
+export function comparedPair(
+  context: Context,
+  otherwise: { readonly first: string; readonly second: string } = { first: '', second: '' },
+): readonly [string, string] {
+  const result = context.given.result as Result | undefined;
+  if (result !== undefined) return [result.comparison.first, result.comparison.second];
+  const { first, second, effect } = context.above?.result ?? {};
+  const named = typeof first === 'string' && typeof second === 'string' && first !== '' && second !== '';
+  return named && effect === undefined ? [first, second] : [otherwise.first, otherwise.second];
+}
+
 /** "The claim: [voice] is [lower] than [tone] on ack_ms by more than [0]; in own words: [...]." */
 export function claimSentence(settings: ClaimSettings, context: Context): Part[] {
   const result = context.given.result as Result | undefined;
-  const pair = result ? [result.comparison.first, result.comparison.second] : [settings.first, settings.second];
-  const roles = result?.scores.design.roles;
+  const pair = comparedPair(context, settings);
+  const roles = result?.scores.design.roles ?? context.design?.roles;
   const first = choiceBlank(
     { key: 'first', label: 'condition the claim is about' },
     settings.first,

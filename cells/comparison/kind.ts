@@ -90,9 +90,10 @@ function unfitRow(settings: ComparisonSettings, scores: Scores, name: string): s
 
 function defaultSettings(context: Context): ComparisonSettings {
   const scores = context.given.scores as Scores | undefined;
-  const factor = scores?.design.factors[0];
+  const design = scores?.design ?? context.design;
+  const factor = design?.factors[0];
   const rest = { trim: 20, alternative: 'two-sided', alpha: 0.05, resamples: 1999 } as const;
-  if (scores !== undefined && factor === undefined) {
+  if (design !== undefined && factor === undefined) {
     return {
       factor: '',
       first: '',

@@ -12,11 +12,13 @@ import { type ComparisonSettings, type EffectSettings, type Factors, rowOfId, ro
  */
 export function comparisonSentence(settings: ComparisonSettings, context: Context): Part[] {
   const scores = context.given.scores as Scores | undefined;
-  const factors = scores?.design.factors ?? [];
+  // While scores are veiled or not there yet, the design above still names its levels.
+  const design = scores?.design ?? context.design;
+  const factors = design?.factors ?? [];
   const planned = rowOfId(settings.estimator);
   const omnibus = settings.effect?.type === 'levels' || settings.effect?.type === 'interaction';
   return [
-    ...questionParts(settings, factors, context, scores?.design.roles.unit ?? ''),
+    ...questionParts(settings, factors, context, design?.roles.unit ?? ''),
     ' on the ',
     ...(planned?.trims ? [trimBlank(settings, context), ' '] : []),
     plannedBlank(settings, factors),
