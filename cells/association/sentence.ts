@@ -30,7 +30,7 @@ export function associationSentence(settings: AssociationSettings, context: Cont
     choiceBlank(
       { key, label },
       settings[key] || null,
-      columnOptions(table, (each) => fits(each, settings)),
+      columnOptions(table, (each) => fits(each, settings), context.blind),
       'which column',
       (value) => ({ ...settings, [key]: value }),
     );
@@ -38,7 +38,7 @@ export function associationSentence(settings: AssociationSettings, context: Cont
     'Relate ',
     column('x', 'first score'),
     ' of each ',
-    participantBlank(settings, table),
+    participantBlank(settings, table, context.blind),
     ' to ',
     column('y', 'second score, the outcome of the slopes'),
     ' by ',
@@ -62,10 +62,12 @@ function fits(column: Column, settings: AssociationSettings): string | null {
   return numbersOnly(column) ?? (column.name === settings.participant ? 'tells participants apart' : null);
 }
 
-function participantBlank(settings: AssociationSettings, table: Table | undefined): Blank {
+function participantBlank(settings: AssociationSettings, table: Table | undefined, blind?: boolean): Blank {
   const options: Option[] = [
-    ...columnOptions(table, (column) =>
-      column.name === settings.x || column.name === settings.y ? 'is one of the two scores' : null,
+    ...columnOptions(
+      table,
+      (column) => (column.name === settings.x || column.name === settings.y ? 'is one of the two scores' : null),
+      blind,
     ),
     { value: EACH_ROW, label: 'row', hint: 'no column tells participants apart: every row is one' },
   ];
