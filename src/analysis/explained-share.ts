@@ -68,22 +68,21 @@ export function explainedShare(layout: Layout, context: OmnibusContext): EffectS
  *
  * @param layout groups and columns
  * @param context alpha, B, seed
- * @param statistic value of resampled groups, null where it is not defined
+ * @param statistic value of a resample from the counts of each group's participants, null where it is not defined
  * @source Efron & Tibshirani 1993; participants are resampled within their group
  */
 export function bootstrapLayout(
   layout: Layout,
   context: OmnibusContext,
-  statistic: (groups: readonly (readonly Float64Array[])[]) => number | null,
+  statistic: (counts: readonly Int32Array[]) => number | null,
 ): { readonly interval: Limits | null; readonly reason?: string } {
   const sizes = layout.groups.map((group) => group.scores[0]?.length ?? 0);
   if (sizes.some((n) => n < 1)) return { interval: null, reason: 'a group holds no participants' };
-  const read = (counts: readonly Int32Array[]) =>
-    statistic(layout.groups.map((group, j) => group.scores.map((column) => expanded(column, counts[j] as Int32Array))));
-  return bootstrapped(sizes, context, read, STATISTIC_STREAM);
+  return bootstrapped(sizes, context, statistic, STATISTIC_STREAM);
 }
 
-function expanded(column: Float64Array, counts: Int32Array): Float64Array {
+/** The scores of a resample written out. */
+export function expanded(column: Float64Array, counts: Int32Array): Float64Array {
   const out = new Float64Array(column.length);
   let at = 0;
   for (let i = 0; i < column.length; i++) for (let k = counts[i] as number; k > 0; k--) out[at++] = column[i] as number;

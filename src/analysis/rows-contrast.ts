@@ -5,7 +5,7 @@ import { noncentralInterval } from '../numerics/effect-size/effect.ts';
 import { trimmedSummaries } from '../numerics/groups.ts';
 import { trimCount } from '../numerics/scores.ts';
 import type { Estimator, RowContext } from './estimators.ts';
-import { bootstrapLayout } from './explained-share.ts';
+import { bootstrapLayout, expanded } from './explained-share.ts';
 import type { EffectSize, Finding } from './finding.ts';
 import { fromT, LEAST_FOR_P, makeRow, trimCautions } from './row.ts';
 import { unequalSpreads } from './rows-omnibus-between.ts';
@@ -148,7 +148,9 @@ function standardized(samples: Samples, context: RowContext, form: Form): Effect
     name,
     value: own,
     how,
-    ...bootstrapLayout(layout, boot, (drawn) => value(drawn.map(([scores]) => scores as Float64Array))),
+    ...bootstrapLayout(layout, boot, (counts) =>
+      value(groups.map((scores, j) => expanded(scores, counts[j] as Int32Array))),
+    ),
   };
 }
 

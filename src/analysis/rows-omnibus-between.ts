@@ -15,6 +15,7 @@ import {
   type OmnibusRow,
   partialEta,
 } from './omnibus-row.ts';
+import { kruskalShare } from './rank-shares.ts';
 
 const oneBetween = (shape: LayoutShape) => shape.between.length === 1 && shape.within.length === 0;
 
@@ -162,9 +163,9 @@ function trimmed(layout: Layout, context: OmnibusContext): Finding {
 
 function kruskal(layout: Layout, context: OmnibusContext): Finding {
   const test = kruskalWallis(groupsOfLevels(layout));
-  const share = (groups: readonly (readonly Float64Array[])[]) =>
-    kruskalWallis(groups.map((group) => group[0] as Float64Array)).epsilon2;
-  const interval = test.epsilon2 === null ? { interval: null } : bootstrapLayout(pooled(layout), context, share);
+  const own = pooled(layout);
+  const interval =
+    test.epsilon2 === null ? { interval: null } : bootstrapLayout(own, context, kruskalShare(groupsOfLevels(layout)));
   return makeOmnibusRow(
     layout,
     context,

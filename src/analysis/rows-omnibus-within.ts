@@ -7,6 +7,7 @@ import { withinFactorsAnova } from '../numerics/anova/within-factors.ts';
 import { friedmanTest } from '../numerics/friedman.ts';
 import type { MauchlyTest } from '../numerics/mauchly.ts';
 import { quadeTest } from '../numerics/quade.ts';
+import type { RepeatedScores } from '../numerics/repeated.ts';
 import { bootstrapLayout, explainedShare } from './explained-share.ts';
 import type { EffectSize, Finding } from './finding.ts';
 import { columnsOfAll, type Layout } from './layout.ts';
@@ -19,6 +20,7 @@ import {
   type OmnibusRow,
   partialEta,
 } from './omnibus-row.ts';
+import { friedmanShare, quadeShare, type ShareOfCounts } from './rank-shares.ts';
 import { SHARE_WORDS } from './rows-omnibus-between.ts';
 
 const onlyWithin = (shape: LayoutShape) => shape.within.length > 0 && shape.between.length === 0;
@@ -230,7 +232,7 @@ function friedman(layout: Layout, context: OmnibusContext): Finding {
       p: test.p,
       pHow: 'chi-square approximation',
       reason: test.reason,
-      share: agreement(layout, context, 'Kendall W', test.kendallsW, (columns) => friedmanTest(columns).kendallsW),
+      share: agreement(layout, context, 'Kendall W', friedmanShare),
       level: 1 - context.alpha,
       cautions: ['R15'],
     },
@@ -238,8 +240,7 @@ function friedman(layout: Layout, context: OmnibusContext): Finding {
 }
 
 function quade(layout: Layout, context: OmnibusContext): Finding {
-  const columns = columnsOfAll(layout);
-  const test = quadeTest(columns);
+  const test = quadeTest(columnsOfAll(layout));
   return makeOmnibusRow(
     layout,
     context,
@@ -247,7 +248,7 @@ function quade(layout: Layout, context: OmnibusContext): Finding {
       estimator: 'quade',
       label: 'weighted ranks, Quade',
       share: 'weighted agreement',
-      method: `Quade 1979: ranks within participants, each participant weighted by the rank of the range of their scores. Effect size: F / (F + n \u2212 1), the share that W is for unweighted ranks, 0 to 1; percentile bootstrap over participants.${aside(layout)}`,
+      method: `Quade 1979: ranks within participants, each participant weighted by the rank of the range of their scores. Effect size: Kendall\u2019s W of the ranks with those weights, 0 to 1; percentile bootstrap over participants.${aside(layout)}`,
     },
     {
       statistic: test.F === null ? null : { name: 'F', value: test.F },
@@ -256,26 +257,23 @@ function quade(layout: Layout, context: OmnibusContext): Finding {
       p: test.p,
       pHow: 'F distribution',
       reason: test.reason,
-      share: agreement(layout, context, 'weighted agreement', weightedAgreement(columns), weightedAgreement),
+      share: agreement(layout, context, 'weighted agreement', quadeShare),
       level: 1 - context.alpha,
       cautions: ['R15'],
     },
   );
 }
 
-function weightedAgreement(columns: readonly Float64Array[]): number | null {
-  const { F } = quadeTest(columns);
-  return F === null ? null : F / (F + (columns[0]?.length ?? 1) - 1);
-}
-
 function agreement(
   layout: Layout,
   context: OmnibusContext,
   name: string,
-  value: number | null,
-  statistic: (columns: readonly Float64Array[]) => number | null,
+  shareOf: (columns: RepeatedScores) => ShareOfCounts,
 ): EffectSize {
+  const columns = columnsOfAll(layout);
   const how = `percentile bootstrap over participants, B = ${context.resamples}`;
+  const read = shareOf(columns);
+  const value = read([new Int32Array(columns[0]?.length ?? 0).fill(1)]);
   if (value === null) return { name, value, interval: null, how, reason: 'not defined for these scores' };
-  return { name, value, how, ...bootstrapLayout(pooled(layout), context, ([columns]) => statistic(columns ?? [])) };
+  return { name, value, how, ...bootstrapLayout(pooled(layout), context, read) };
 }
