@@ -20,22 +20,25 @@ export function rowLabel(row: RateRow): string {
   return row.cleaning === '' ? row.label : `${row.label}, ${row.cleaning}`;
 }
 
+/** A line within a sentence: what rejects. Lines of relabelled data are rules before the planned row. */
+function subject(value: Rates, row: RateRow): string {
+  return value.mode === 'relabel' ? `the planned row with ${row.label}` : rowLabel(row);
+}
+
 export function sayRates(value: Rates): string {
   const { rows, alpha, runs, mode } = value;
   const what =
     mode === 'relabel' ? `${count(runs)} relabellings of these data` : `${count(runs)} simulated experiments`;
   const judged = rows.filter((row) => row.judged > 0);
   const rate = (row: RateRow) => row.rejected / row.judged;
-  const highest = judged.reduce<RateRow | null>(
-    (best, row) => (best === null || rate(row) > rate(best) ? row : best),
-    null,
-  );
-  const first = judged[0];
-  if (highest === null || first === undefined) return `In ${what} no method could be judged.`;
-  const share = value.difference === 0 ? 'rejects although nothing is going on' : 'rejects';
-  const other =
-    highest === first ? '' : `; most often, in ${rateText(highest.rejected, highest.judged)}: ${rowLabel(highest)}`;
-  return `In ${what} at ${alphaText(alpha)}, ${rowLabel(first)} ${share} in ${rateText(first.rejected, first.judged)}${other}.`;
+  const [first] = judged;
+  if (first === undefined) return `In ${what} no method could be judged.`;
+  const highest = judged.reduce((best, row) => (rate(row) > rate(best) ? row : best), first);
+  const nothing = value.difference === 0 ? ' although nothing is going on' : '';
+  const said = (row: RateRow) => `in ${rateText(row.rejected, row.judged)}`;
+  const most =
+    highest === first ? '' : ` The highest rate is that of ${subject(value, highest)}: ${said(highest).slice(3)}.`;
+  return `In ${what} at ${alphaText(alpha)}, ${subject(value, first)} rejects ${said(first)}${nothing}.${most}`;
 }
 
 export function ratesNotes(value: Rates): Note[] {

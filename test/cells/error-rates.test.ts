@@ -67,7 +67,7 @@ describe('the error-rates cell', () => {
   test('by hand: rates are written to the decimals their runs allow', () => {
     expect(rateText(255, 5000)).toBe('.051 [.045, .058]');
     expect(rateText(5, 100)).toBe('.05 [.02, .11]');
-    const row = { label: 'Welch', cleaning: '', judged: 5000, rejected: 255, intervals: 0, covered: 0 };
+    const row = { label: 'no cutoff', cleaning: '', judged: 5000, rejected: 255, intervals: 0, covered: 0 };
     const value: Rates = {
       mode: 'relabel',
       runs: 5000,
@@ -78,9 +78,9 @@ describe('the error-rates cell', () => {
       exact: null,
     };
     expect(sayRates(value)).toBe(
-      'In 5,000 relabellings of these data at \u03b1 = .05, Welch rejects although nothing is going on in .051 [.045, .058].',
+      'In 5,000 relabellings of these data at \u03b1 = .05, the planned row with no cutoff rejects in .051 [.045, .058] although nothing is going on.',
     );
-    expect(ratesTable(value).rows).toEqual([['Welch', '.051 [.045, .058]', '5,000']]);
+    expect(ratesTable(value).rows).toEqual([['no cutoff', '.051 [.045, .058]', '5,000']]);
   });
 
   test('degenerate: no method could be judged', () => {

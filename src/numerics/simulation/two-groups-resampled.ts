@@ -1,7 +1,7 @@
 /** The decisions of the bootstrap and permutation tests of two groups in one simulated experiment, stopped once settled. */
 import { drawCounts } from '../resample.ts';
-import { walkWinsorized, winsorWalk } from '../resample-walks.ts';
-import { nextWord, startState } from '../rng.ts';
+import { type WinsorWalk, winsorWalk } from '../resample-walks.ts';
+import { startState } from '../rng.ts';
 import { trimmedMeanSorted } from '../trimmed-mean.ts';
 import { winsorizedSorted } from '../winsorized.ts';
 import { OUTCOME } from './outcome.ts';
@@ -22,6 +22,42 @@ export interface BootstrapOutcomes {
   percentile: number;
   /** Bootstrap-t of the same, symmetric. */
   studentized: number;
+}
+
+/**
+ * Trimmed and winsorized sums of a resample in three stretches without a test per score, and clears the counts; `sum`,
+ * `low` and `high` as walkWinsorized leaves them.
+ */
+function walkThrough(s: Float64Array, counts: Int32Array, g: number, out: WinsorWalk): void {
+  const n = counts.length;
+  const stop = n - g;
+  let at = 0;
+  let i = -1;
+  while (at <= g) {
+    i++;
+    at += counts[i] as number;
+    counts[i] = 0;
+  }
+  const low = s[i] as number;
+  let trimmed = (Math.min(at, stop) - g) * low;
+  let squares = trimmed * low;
+  while (at < stop) {
+    i++;
+    const c = counts[i] as number;
+    counts[i] = 0;
+    const next = at + c;
+    const score = s[i] as number;
+    const part = (next > stop ? stop - at : c) * score;
+    trimmed += part;
+    squares += part * score;
+    at = next;
+  }
+  // The walk stops at the score that reaches the end of the middle, so that one is the highest kept.
+  const high = s[i] as number;
+  for (i++; i < n; i++) counts[i] = 0;
+  out.trimmed = trimmed;
+  out.sum = trimmed + g * (low + high);
+  out.squares = squares + g * (low * low + high * high);
 }
 
 /** Counts of one side of a decision: settled once it can no longer change. */
@@ -67,9 +103,9 @@ export function bootstrapDecider({ alpha, trim, B, seed }: ResampledOptions) {
     startState(state, experiment, STREAM.bootstrap, seed);
     for (let b = 0; b < B; b++) {
       drawCounts(cx, n1, state);
-      walkWinsorized(sx, cx, g1, walkX);
+      walkThrough(sx, cx, g1, walkX);
       drawCounts(cy, n2, state);
-      walkWinsorized(sy, cy, g2, walkY);
+      walkThrough(sy, cy, g2, walkY);
       const moved = walkX.trimmed / h1 - walkY.trimmed / h2;
       const d = estimate + moved;
       if (d < 0) below++;
@@ -149,11 +185,18 @@ export function permutationDecider({ alpha, B, seed }: Omit<ResampledOptions, 't
     const t = tOf(sum, own) * (1 - 1e-12);
     let [larger, largerT] = [0, 0];
     startState(state, experiment, STREAM.permutation, seed);
+    // The generator of rng.ts with its state in local variables: kernels, design 3.
+    let [s0, s1, s2, s3] = [state[0] as number, state[1] as number, state[2] as number, state[3] as number];
     for (let b = 0; b < B; b++) {
       let s = 0;
       let q = 0;
       for (let i = 0; i < n1; i++) {
-        const j = i + Math.floor((nextWord(state) / 4294967296) * (N - i));
+        const word = (((s0 + s1) | 0) + s3) | 0;
+        s3 = (s3 + 1) | 0;
+        s0 = s1 ^ (s1 >>> 9);
+        s1 = (s2 + (s2 << 3)) | 0;
+        s2 = (((s2 << 21) | (s2 >>> 11)) + word) | 0;
+        const j = i + (((word >>> 0) * (N - i) * 2 ** -32) | 0);
         const score = all[j] as number;
         all[j] = all[i] as number;
         all[i] = score;
