@@ -91,7 +91,7 @@ export const CAUTIONS = {
   R18: {
     action: 'warn',
     sentence: (f) =>
-      `The groups differ in size and in spread (SD ${text(f, 'ratio')} to 1, the larger in the ${text(f, 'where')} ${text(f, 'groups')}): ${text(f, 'test')} would be ${text(f, 'bias')}. Read the ${text(f, 'beside')} beside it.`,
+      `The groups differ in size and in spread (SD ${text(f, 'ratio')} to 1, the larger in the ${text(f, 'where')} ${text(f, 'groups')}): ${text(f, 'test')} would be ${text(f, 'bias')}. Read ${text(f, 'beside')} beside it.`,
     source: 'Scheffe 1959, 10.4; exact levels in methods 5.1',
   },
   R19: {
