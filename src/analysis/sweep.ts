@@ -150,14 +150,14 @@ function choices(result: Result, own: boolean): { estimator: Estimator; trim: nu
 }
 
 /** A trimmed row that trims nobody is the mean's row. */
-function estimatorKey(estimator: Estimator, trim: number, { x, y, parts }: Samples): string {
+export function estimatorKey(estimator: Estimator, trim: number, { x, y, parts }: Samples): string {
   if (!estimator.trims) return estimator.id;
   const g = (parts?.map((part) => part.scores) ?? [x, y]).map((each) => Math.floor((trim * each.length) / 100));
   return g.every((each) => each === 0) ? estimator.untrimmed : `${estimator.id} ${g.join(' ')}`;
 }
 
 /** The kept rows under the conditions compared, packed 15 to a character. */
-function keptKey(design: Design, comparison: ComparisonSpec): string {
+export function keptKey(design: Design, comparison: ComparisonSpec): string {
   const { effect, factor: pairFactor, first, second } = comparison;
   const [factor] =
     effect === undefined
@@ -180,14 +180,14 @@ function keptKey(design: Design, comparison: ComparisonSpec): string {
   return key + String.fromCharCode(word);
 }
 
-function extremeLabel(rules: readonly Rule[], unit: string): string {
+export function extremeLabel(rules: readonly Rule[], unit: string): string {
   const extreme = rules.filter((rule) => rule.rule === 'extreme' && rule.cutoff !== null);
   return extreme.length === 0
     ? 'nobody set aside for being extreme'
     : extreme.map((rule) => ruleLabel(rule, unit)).join('; ');
 }
 
-function join(a: Specification, b: Specification): Specification {
+export function join(a: Specification, b: Specification): Specification {
   const words = `${b.ruleLabel}, ${b.finding.label}`;
   const same = words === `${a.ruleLabel}, ${a.finding.label}`;
   return {
@@ -198,7 +198,7 @@ function join(a: Specification, b: Specification): Specification {
   };
 }
 
-function summarise(specifications: Specification[], unit: string): Sweep {
+export function summarise(specifications: Specification[], unit: string): Sweep {
   const groups = new Map<string, number[]>();
   specifications.forEach((each, index) => {
     if (each.finding.estimate === null) return;
