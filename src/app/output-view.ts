@@ -4,6 +4,7 @@ import './table-out.ts';
 import { type CellModel, computedOf } from './cell-model.ts';
 import type { Page } from './page.ts';
 import { saidOf } from './said.ts';
+import { veilBound } from './veil-bound.ts';
 
 /**
  * What stands under a cell's sentence: its result, or in words why there is none. The result keeps its place in the
@@ -31,7 +32,7 @@ function message(page: Page, model: CellModel): TemplateResult | typeof nothing 
   }
   switch (state.status) {
     case 'veiled':
-      return veil(page);
+      return veil(page, model);
     case 'left-out':
       return html`<p class="plainly" data-part="left-out">Left out for now.</p>`;
     case 'failed':
@@ -47,9 +48,18 @@ function message(page: Page, model: CellModel): TemplateResult | typeof nothing 
   }
 }
 
-function veil(page: Page): TemplateResult {
+function veil(page: Page, model: CellModel): TemplateResult {
+  const bound = model.kind?.gives === 'result' ? veilBound(page, model.cell.id) : null;
+  const means = bound === null || bound.means === null ? '' : ` (means: ${bound.means})`;
   return html`<div class="veil" data-part="veil">
-    <b>Hidden while the conditions are hidden.</b> Settle the rules first. When they stand,
+    <b>Hidden while the conditions are hidden.</b>
+    ${
+      bound === null
+        ? nothing
+        : html`With what is kept now the interval will reach at most about <b>${bound.width}</b> to either side${means}.
+            The bound does not use the ${bound.factor}, so it tells nothing about direction.`
+    }
+    Settle the rules first. When they stand,
     <button type="button" class="word" @click=${() => page.show({ sheet: 'open' })}>open the conditions</button>
     and say why; the decision log keeps the reason.
   </div>`;

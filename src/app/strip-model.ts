@@ -5,6 +5,7 @@ import { findingText } from './finding-text.ts';
 import { claimOf, plannedOf } from './hold-reference.ts';
 import type { Page } from './page.ts';
 import type { StripModel } from './strip-view.ts';
+import { veilBound } from './veil-bound.ts';
 import { cellOf, JOINT, STANDING } from './wiring.ts';
 
 const NO_CLAIM = 'No claim yet: say what the comparison shows, and this strip tests whether it stands fast.';
@@ -36,6 +37,7 @@ export function stripModel(page: Page, width: number): StripModel {
     now: findingText(plannedOf(claim)),
     reference: held === null ? null : findingText(held.finding),
     blind: worksheet.opening.state === 'blind',
+    bound: worksheet.opening.state === 'blind' && standing !== undefined ? veilBound(page, standing.id) : null,
     state,
     say: shown && computed !== undefined && kind !== undefined ? kind.say(computed, settings) : null,
     joint: jointOf(page),

@@ -1,9 +1,11 @@
 import { html, nothing, type TemplateResult } from 'lit';
 import type { Computed, ViewContext } from '../../cells/kind.ts';
+import { count } from '../../cells/numbers.ts';
 import type { CellState } from '../engine/cell-state.ts';
 import { computedOf } from './cell-model.ts';
 import { LightElement } from './light-element.ts';
 import type { Page } from './page.ts';
+import type { VeilBound } from './veil-bound.ts';
 import { STANDING } from './wiring.ts';
 
 /** What the standing strip shows. */
@@ -15,6 +17,8 @@ export interface StripModel {
   readonly now: string | null;
   readonly reference: string | null;
   readonly blind: boolean;
+  /** What may be told while the conditions are hidden, or null. */
+  readonly bound: VeilBound | null;
   /** State of the hidden standing cell; null where there is none. */
   readonly state: CellState | null;
   readonly context: ViewContext | null;
@@ -57,9 +61,12 @@ export class StripView extends LightElement {
   }
 
   #now(): TemplateResult | typeof nothing {
-    const { now, reference, blind, hasClaim } = this.model;
+    const { now, reference, blind, bound, hasClaim } = this.model;
     if (!hasClaim) return nothing;
-    if (blind) return html`<small>estimate hidden while the conditions are hidden</small>`;
+    if (blind) {
+      const width = bound === null ? ' while the conditions are hidden' : `; at most about ${bound.width}`;
+      return html`<small data-part="hidden-now">estimate hidden${width}</small>`;
+    }
     const letGo = html`<button
       type="button"
       class="word small"
@@ -105,14 +112,20 @@ export class StripView extends LightElement {
   }
 
   #counts(): TemplateResult | string | typeof nothing {
-    const { state, say, waitingFor, blind } = this.model;
+    const { state, say, waitingFor, blind, bound } = this.model;
     if (state === null) return nothing;
-    if (blind) return html`No analysis has looked at the conditions yet.`;
+    if (blind) return blindCounts(bound);
     if (state.status === 'failed') return html`<span class="failed">${state.sentence}</span>`;
     if (state.status === 'waiting') return `Waiting for ${waitingFor}.`;
     if (say !== null) return html`${verdicts(say)}${this.#joint()}`;
     return state.status === 'computing' ? 'Running every defensible analysis \u2026' : nothing;
   }
+}
+
+/** Refused and merged analyses are not told apart: which ones they are may depend on the conditions. */
+function blindCounts(bound: VeilBound | null): string {
+  if (bound === null || bound.analyses === null) return 'No analysis has looked at the conditions yet.';
+  return `${count(bound.analyses)} analyses are planned. None has looked at the ${bound.factors} yet.`;
 }
 
 /** The verdicts in a sentence are told by weight and colour as well as by their words. */

@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { plainSentence } from '../../cells/kind.ts';
 import { registry } from '../../cells/registry.ts';
+import { veilWidth } from '../../src/analysis/veil-width.ts';
 import { Engine } from '../../src/engine/engine.ts';
 import { resultsOf } from '../../src/replay/record.ts';
 import { inlineRunner } from '../../src/workers/inline.ts';
@@ -23,10 +24,14 @@ const DEMOS: readonly (readonly [name: string, how: Randomised])[] = [
   ['hearing-words', { participant: 'listener', between: 'hearing_aid' }],
 ];
 
-function blindDemo(name: string): Worksheet {
+function committed(name: string): Worksheet {
   const parsed = parseWorksheet(readFileSync(`demo-data/${name}.standfast.json`, 'utf8'));
   if (!parsed.ok) throw new Error(parsed.sentence);
-  return { ...parsed.worksheet, opening: { state: 'blind' }, results: {} };
+  return parsed.worksheet;
+}
+
+function blindDemo(name: string): Worksheet {
+  return { ...committed(name), opening: { state: 'blind' }, results: {} };
 }
 
 /** Everything the page and the file could say of every cell, as text. The tables above a design flow but are not shown. */
@@ -58,6 +63,33 @@ async function everythingSaid(worksheet: Worksheet): Promise<string> {
 function withData(worksheet: Worksheet, change: (block: DataBlock) => DataBlock): Worksheet {
   return { ...worksheet, data: worksheet.data.map(change) };
 }
+
+describe('the bound on the interval of the plan', () => {
+  // The interval itself is the one the demo's record holds, worked out with the conditions open.
+  test.each(DEMOS)('invariance: is about the half width of the recorded interval of %s, or more', async (name) => {
+    const record = committed(name);
+    const comparison = record.cells.find(({ kind }) => kind === 'comparison');
+    if (comparison === undefined) throw new Error('no comparison');
+    const { factor, trim, alpha } = comparison.settings as { factor: string; trim: unknown; alpha: number };
+    expect(trim).toEqual({ shared: 'trim' });
+    const found = record.results[comparison.id]?.value as {
+      planned: number;
+      findings: { interval: [number, number] }[];
+    };
+    const [low, high] = found.findings[found.planned]?.interval ?? [0, 0];
+    const engine = new Engine({ registry, runner: inlineRunner() });
+    engine.show(blindDemo(name));
+    await engine.idle();
+    const { design } = engine.context(comparison.id);
+    engine.dispose();
+    if (design === undefined) throw new Error('no design');
+    const bound = veilWidth(design, { statistic: 'mean', trim: 0 }, { factor, trim: 20, alpha });
+    // Winsorizing all pairs or both groups together takes more from the wider one: a fifth less is "about".
+    expect(bound).toBeGreaterThanOrEqual((0.8 * (high - low)) / 2);
+    // "at most about": a bound that says nothing would be of no use.
+    expect(bound).toBeLessThan(3 * (high - low));
+  });
+});
 
 describe('while the conditions are hidden', () => {
   test.each(DEMOS)('invariance: nothing said of %s depends on the labels, 20 relabellings', async (name, how) => {
