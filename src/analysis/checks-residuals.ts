@@ -84,10 +84,10 @@ export function residualDf({ group, groups, columns }: ResidualShape): number {
 export function centre(values: Float64Array, { group, groups, columns }: ResidualShape): Float64Array {
   const n = group.length;
   if (columns > 1) {
-    for (let who = 0; who < n; who++) {
-      const own = values.subarray(who * columns, (who + 1) * columns);
-      const middle = mean(own);
-      for (let j = 0; j < columns; j++) own[j] = (own[j] as number) - middle;
+    for (let from = 0; from < values.length; from += columns) {
+      let sum = 0;
+      for (let at = from; at < from + columns; at++) sum += values[at] as number;
+      for (let at = from; at < from + columns; at++) values[at] = (values[at] as number) - sum / columns;
     }
   }
   const sums = new Float64Array(groups * columns);

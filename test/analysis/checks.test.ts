@@ -20,7 +20,7 @@ beforeAll(async () => {
   plants = await checkAssumptions(plantLayout, options);
   visits = await checkAssumptions(visitLayout, options);
   mixed = await checkAssumptions(mixedLayout, options);
-});
+}, 60_000);
 
 describe('checkAssumptions', () => {
   it('by hand: the quantity follows the design', () => {

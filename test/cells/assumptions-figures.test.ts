@@ -28,7 +28,7 @@ beforeAll(async () => {
   pair = await checkAssumptions(sleepLayout, options);
   groups = await checkAssumptions(plantLayout, options);
   visits = await checkAssumptions(visitLayout, options);
-});
+}, 60_000);
 
 describe('rows of the figures', () => {
   it('by hand: the quantile plot has every residual, the band, and marks what is outside', () => {

@@ -26,7 +26,7 @@ const made = {} as Record<Look, Computed<Checks, null>>;
 beforeAll(async () => {
   for (const name of Object.keys(looks) as Look[])
     made[name] = await run<Checks, null>(assumptionsKind, looks[name][1], { scores: looks[name][0] });
-});
+}, 60_000);
 const saidIn = (name: Look) =>
   Object.fromEntries(sentencesOf(made[name].value).map(({ lead, text }) => [lead, text])) as Record<string, string>;
 
