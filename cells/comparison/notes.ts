@@ -142,7 +142,13 @@ function simulatedWords(result: Result): string {
   const { rules, roles } = result.scores.design;
   const rule = rules.find((each) => each.rule === 'extreme' && each.cutoff !== null && each.scope === 'condition');
   if (rule?.rule !== 'extreme' || rule.cutoff === null) return '';
-  if (result.scope !== 'between' || roles.rows !== 'one score' || rule.sides !== 'both' || roles.within.length > 0)
+  if (
+    result.scope !== 'between' ||
+    roles.rows !== 'one score' ||
+    rule.sides !== 'both' ||
+    rule.repeated === true ||
+    roles.within.length > 0
+  )
     return '';
   return simulatedLevel({ sizes: sizesBefore(result), measure: rule.measure, cutoff: rule.cutoff });
 }
