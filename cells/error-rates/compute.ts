@@ -37,7 +37,7 @@ export async function relabelled(settings: RatesSettings, result: Result, env: E
   }));
   const inBest = choices.filter((each) => each.inBest).length;
   rows.push({
-    label: `the best of ${inBest}: none and the cutoffs across conditions`,
+    label: `the best of no cutoff and ${inBest - 1} cutoffs`,
     cleaning: '',
     judged: counts.relabellings,
     rejected: counts.best,

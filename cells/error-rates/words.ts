@@ -17,7 +17,7 @@ export function rateName(value: Rates): string {
 
 /** A line's method with what was done before. */
 export function rowLabel(row: RateRow): string {
-  return row.cleaning === '' ? row.label : `${row.label}, ${row.cleaning}`;
+  return row.cleaning === '' ? row.label : `${row.label} (${row.cleaning})`;
 }
 
 /** A line within a sentence: what rejects. Lines of relabelled data are rules before the planned row. */

@@ -38,7 +38,7 @@ describe('the error-rates cell', () => {
     const best = value.rows.at(-1);
     expect((everyone?.rejected ?? 0) / 200).toBeLessThan(0.05 + 3.5 * Math.sqrt(0.0475 / 200));
     expect(best?.rejected).toBeGreaterThanOrEqual(everyone?.rejected ?? 0);
-    expect(best?.label).toBe('the best of 4: none and the cutoffs across conditions');
+    expect(best?.label).toBe('the best of no cutoff and 3 cutoffs');
   });
 
   test('agrees with exact levels: normal scores, SD 2:1, 5 and 15 participants: Student .1577, Welch .0563', async () => {
