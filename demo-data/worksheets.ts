@@ -62,6 +62,10 @@ function comparisonOf(factor: string, first: string, second: string, estimator: 
   };
 }
 
+function assumptionsOf(factor: string, first: string, second: string, departures: readonly string[]): Settings {
+  return { factor, first, second, by: '', test: 'shapiro-wilk', departures, alpha: 0.05 };
+}
+
 interface Plan {
   /** Name of the demo without its ending. */
   readonly name: string;
@@ -171,6 +175,7 @@ const bridgeWorkload: Plan = {
       },
     },
     score,
+    { kind: 'assumptions', settings: assumptionsOf('alert', 'voice', 'tone', ['exponential', 't3', 'contaminated']) },
     { kind: 'comparison', settings: comparisonOf('alert', 'voice', 'tone', 'trimmed-differences') },
     { kind: 'claim', settings: { first: 'voice', relation: 'lower', second: 'tone', margin: 0, title: '' } },
   ],
@@ -197,6 +202,10 @@ const glovePegTest: Plan = {
       },
     },
     score,
+    {
+      kind: 'assumptions',
+      settings: assumptionsOf('glove', 'insulated', 'thin', ['exponential', 't3', 'contaminated', 'spread']),
+    },
     { kind: 'comparison', settings: comparisonOf('glove', 'insulated', 'thin', 'yuen-welch') },
     { kind: 'claim', settings: { first: 'insulated', relation: 'higher', second: 'thin', margin: 0, title: '' } },
   ],
