@@ -15,9 +15,10 @@ import { type CellModel, computedOf } from './cell-model.ts';
 import { CellModels } from './cell-models.ts';
 import { claimOf, plannedOf } from './hold-reference.ts';
 import { LightElement } from './light-element.ts';
+import { changeOpensSheet, openConditionsSheet } from './open-sheets.ts';
 import type { Page } from './page.ts';
 import { saidOf } from './said.ts';
-import { incomingSheet, keysSheet, openConditionsSheet } from './small-sheets.ts';
+import { incomingSheet, keysSheet } from './small-sheets.ts';
 import { stripModel } from './strip-model.ts';
 import { thenView } from './then-view.ts';
 import { dependentsOf } from './wiring.ts';
@@ -203,10 +204,14 @@ export class AppView extends LightElement {
       worksheets: { heading: 'Worksheets', content: html`<sf-worksheets .page=${page}></sf-worksheets>` },
       save: { heading: 'Save a copy', content: html`<sf-save .page=${page} .worksheet=${page.worksheet}></sf-save>` },
       open: { heading: 'Open the conditions', content: openConditionsSheet(page) },
+      opens: { heading: 'This opens the conditions', content: changeOpensSheet(page) },
       incoming: { heading: 'These data', content: incomingSheet(page) },
     };
     const { heading, content } = sheets[sheet];
-    const close = (): void => page.show({ sheet: null, incoming: null });
+    const close = (): void => {
+      page.parts.document.answer(null);
+      page.show({ sheet: null, incoming: null });
+    };
     return html`<sf-sheet .heading=${heading} .name=${sheet} .content=${content} .close=${close}></sf-sheet>`;
   }
 

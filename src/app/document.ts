@@ -12,6 +12,10 @@ export interface DocumentOptions {
   readonly who: () => string;
   /** Chains a decision to the log. */
   readonly append: (log: readonly LogEntry[], decision: Decision) => readonly LogEntry[];
+  /** Why a change would open the conditions, as a sentence; such a change waits for an answer. */
+  readonly opens?: (before: Worksheet, after: Worksheet) => string | null;
+  /** Called when a change waits. */
+  readonly ask?: () => void;
 }
 
 export type ChangeType = 'edit' | 'undo' | 'redo' | 'open';
@@ -40,6 +44,13 @@ interface Step {
   readonly record: Worksheet;
 }
 
+/** A change that would open the conditions, and waits for a reason. */
+interface Waiting {
+  /** What it would show. */
+  readonly sentence: string;
+  readonly apply: (reason: string) => void;
+}
+
 const BURST_MS = 1500;
 
 /**
@@ -51,6 +62,7 @@ export class WorksheetDocument {
   #past: Step[] = [];
   #future: Step[] = [];
   #burst: { key: string; at: number } | null = null;
+  #waiting: Waiting | null = null;
   readonly #options: DocumentOptions;
   readonly #listeners = new Set<(change: DocumentChange) => void>();
 
@@ -82,6 +94,7 @@ export class WorksheetDocument {
     const before = this.#record;
     const after = change(before);
     if (after === before) return false;
+    if (this.#waits(after, (reason) => this.#editOpening(label, change, reason))) return false;
     const step = this.#continues(options.merge) ? (this.#past.at(-1) ?? null) : null;
     const base = step?.record ?? before;
     const text = typeof label === 'string' ? label : label(base, after);
@@ -121,12 +134,43 @@ export class WorksheetDocument {
     this.edit('conditions opened without a sealed plan', (worksheet) => opened(worksheet, reason, when), { reason });
   }
 
+  /** Why the change that waits would open the conditions; null where none waits. */
+  get asked(): string | null {
+    return this.#waiting?.sentence ?? null;
+  }
+
+  /** Makes the change that waits and opens the conditions for this reason, or gives it up (null). */
+  answer(reason: string | null): void {
+    const waiting = this.#waiting;
+    this.#waiting = null;
+    if (reason !== null) waiting?.apply(reason);
+  }
+
   /** Another worksheet takes this one's place; its history starts here. */
   replace(worksheet: Worksheet): void {
     this.#past = [];
     this.#future = [];
     this.#burst = null;
+    this.#waiting = null;
     this.#become('open', worksheet.title, worksheet);
+  }
+
+  /** Whether this change must wait, because it would open the conditions. */
+  #waits(after: Worksheet, apply: (reason: string) => void): boolean {
+    const sentence = this.#options.opens?.(this.#record, after) ?? null;
+    if (sentence === null) return false;
+    this.#waiting = { sentence, apply };
+    this.#options.ask?.();
+    return true;
+  }
+
+  #editOpening(label: Label, change: (worksheet: Worksheet) => Worksheet, reason: string): void {
+    const when = this.#options.now();
+    const words = (before: Worksheet, after: Worksheet): string | null => {
+      const text = typeof label === 'string' ? label : label(before, after);
+      return `${text ?? 'changed'}, which opened the conditions without a sealed plan`;
+    };
+    this.edit(words, (worksheet) => opened(change(worksheet), reason, when), { reason });
   }
 
   #continues(key: string | undefined): boolean {
@@ -147,8 +191,11 @@ export class WorksheetDocument {
   }
 
   #step(from: Step[], to: Step[], type: 'undo' | 'redo', words: string): string | null {
-    const step = from.pop();
+    const step = from.at(-1);
     if (step === undefined) return null;
+    const open = (reason: string): void => this.#editOpening(`${words}${step.label}`, () => step.record, reason);
+    if (this.#waits(step.record, open)) return null;
+    from.pop();
     const before = this.#record;
     to.push({ label: step.label, record: before });
     this.#burst = null;

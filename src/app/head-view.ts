@@ -90,7 +90,7 @@ export class HeadView extends LightElement {
     ${word('log', `Decision log \u00b7 ${worksheet.log.length}`, sheet('log'))}
     ${
       worksheet.opening.state === 'blind'
-        ? word('open-conditions', 'Open the conditions', sheet('open'))
+        ? word('open-conditions', 'Open the conditions', () => page.show({ sheet: 'open', openReason: '' }))
         : word('hold', 'Hold as reference', () => holdReference(page), !this.mayHold)
     }
     ${word('worksheets', 'Worksheets', sheet('worksheets'))} ${word('save', 'Save a copy', sheet('save'))}

@@ -14,6 +14,8 @@ import { appendEntry } from '../worksheet/decision-log.ts';
 import type { AppView } from './app-view.ts';
 import { WorksheetDocument } from './document.ts';
 import { firstWorksheet } from './first-worksheet.ts';
+
+import { opensConditions } from './hidden-conditions.ts';
 import { IdbStore } from './idb-store.ts';
 import { makeWorker } from './make-worker.ts';
 import { remember, sayBroken } from './open-worksheet.ts';
@@ -52,15 +54,17 @@ async function start(): Promise<void> {
   applyTheme(theme, false);
   const store = new IdbStore();
   const { worksheet, problem } = await firstWorksheet(store, carriedText());
+  let page: Page | null = null;
   const document_ = new WorksheetDocument({
     worksheet,
     now: () => new Date().toISOString(),
     clock: () => performance.now(),
     who: signedAs,
     append: appendEntry,
+    opens: opensConditions,
+    ask: () => page?.show({ sheet: 'opens', blank: null }),
   });
   const runner = workerPool({ create: makeWorker });
-  let page: Page | null = null;
   const engine = new Engine({ registry, runner, onState: (cellId) => page?.stateChanged(cellId) });
   const autosave = new Autosave(store, timers, (save) => page?.show({ save }));
   page = new Page({ registry, views, document: document_, engine, runner, store, autosave }, firstView(theme, problem));

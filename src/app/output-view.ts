@@ -20,7 +20,23 @@ export function outputView(page: Page, model: CellModel): TemplateResult {
       : html`<div class=${old ? 'was' : state.status === 'computing' ? 'becoming' : ''} ?inert=${old}>
           ${result(page, model, kind, computed)}
         </div>`
-  }`;
+  }${nothingToHide(page, model)}`;
+}
+
+/** Under data whose rows are hidden: what opens them where there is no condition at all. */
+function nothingToHide(page: Page, model: CellModel): TemplateResult | typeof nothing {
+  const isData = model.kind?.gives === 'table' && Object.keys(model.kind.takes).length === 0;
+  if (model.opening !== 'blind' || model.state.status !== 'fresh' || !isData) return nothing;
+  return html`<p class="plainly" data-part="no-condition">
+    The rows are hidden with the conditions. If these data have none,
+    <button
+      type="button"
+      class="word small"
+      @click=${() => page.show({ sheet: 'open', openReason: 'there is no condition to hide' })}
+    >
+      say that there is no condition to hide
+    </button>.
+  </p>`;
 }
 
 function message(page: Page, model: CellModel): TemplateResult | typeof nothing {
@@ -60,7 +76,7 @@ function veil(page: Page, model: CellModel): TemplateResult {
             The bound does not use the ${bound.factor}, so it tells nothing about direction.`
     }
     Settle the rules first. When they stand,
-    <button type="button" class="word" @click=${() => page.show({ sheet: 'open' })}>open the conditions</button>
+    <button type="button" class="word" @click=${() => page.show({ sheet: 'open', openReason: '' })}>open the conditions</button>
     and say why; the decision log keeps the reason.
   </div>`;
 }

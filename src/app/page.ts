@@ -13,7 +13,7 @@ export type Views = {
   readonly [kind: string]: (computed: Computed<never, never>, context: ViewContext) => TemplateResult | typeof nothing;
 };
 
-export type SheetName = 'log' | 'keys' | 'worksheets' | 'save' | 'open' | 'incoming';
+export type SheetName = 'log' | 'keys' | 'worksheets' | 'save' | 'open' | 'opens' | 'incoming';
 
 export interface PageParts {
   readonly registry: Registry;
@@ -41,6 +41,8 @@ export interface PageView {
   /** Data that arrived without a blank to go to. */
   readonly incoming: DataBlock | null;
   readonly foot: boolean;
+  /** The reason that stands in the sheet for opening the conditions from the start. */
+  readonly openReason?: string;
 }
 
 const SAID_MS = 6000;

@@ -30,29 +30,6 @@ export function keysSheet(): TemplateResult {
   </table>`;
 }
 
-/** Opening the conditions without a sealed plan asks for a reason. */
-export function openConditionsSheet(page: Page): TemplateResult {
-  const open = (event: SubmitEvent): void => {
-    event.preventDefault();
-    const field = (event.target as HTMLFormElement).elements.namedItem('reason') as HTMLTextAreaElement;
-    const reason = field.value.trim();
-    if (reason === '') return;
-    page.show({ sheet: null });
-    page.parts.document.openConditions(reason);
-  };
-  return html`<form @submit=${open}>
-    <p>
-      The conditions have been hidden while the rules were set. Opening them cannot be taken back, and undo will not
-      cross it. The reason stands in the decision log and in the file.
-    </p>
-    <label class="block"
-      >why they are opened without a sealed plan
-      <textarea name="reason" rows="3" required data-part="reason" placeholder="reanalysis of published data"></textarea>
-    </label>
-    <div class="words"><button type="submit" class="word main" data-part="open-now">open the conditions</button></div>
-  </form>`;
-}
-
 /** Data that arrived by drop or paste and could go to more than one place. */
 export function incomingSheet(page: Page): TemplateResult {
   const block = page.view.incoming;
