@@ -56,7 +56,7 @@ function student(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'student',
-      label: 'difference of means, Student t',
+      label: 'means, Student t',
       quantity: 'difference of means',
       group: 'means',
       method:
@@ -73,7 +73,7 @@ function welch(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'welch',
-      label: 'difference of means, Welch t',
+      label: 'means, Welch t',
       quantity: 'difference of means',
       group: 'means, separate variances',
       method:
@@ -95,7 +95,7 @@ function yuen(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'yuen-welch',
-      label: `difference of ${context.trim} % trimmed means, Yuen\u2013Welch`,
+      label: `${context.trim} % trimmed means, Yuen\u2013Welch`,
       quantity: 'difference between the typical scores',
       group: context.trim === 0 ? 'means, separate variances' : 'trimmed means',
       method: `Yuen 1974: ${context.trim} % trimmed at each end (g = ${test.g.join(' and ')}), winsorized variances, Satterthwaite df on h \u2212 1. Effect size: Algina, Keselman & Penfield 2005, percentile bootstrap interval.`,
@@ -117,7 +117,7 @@ function winsorizedGroups(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'winsorized-groups',
-      label: `difference of ${context.trim} % winsorized means, bootstrap`,
+      label: `${context.trim} % winsorized means, bootstrap`,
       quantity: 'difference with the tails pulled in',
       group: context.trim === 0 ? 'means' : 'winsorized means',
       method: `Percentile bootstrap with the winsorizing inside each resample (methods 3.2), ${context.resamples} resamples within each group, seed ${context.seed}. An ordinary t on winsorized scores is refused: its level is 23 to 29 % instead of 5 % (simulated).`,
@@ -137,7 +137,7 @@ function medianGroups(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'median-groups',
-      label: 'difference of medians, bootstrap',
+      label: 'medians, bootstrap',
       quantity: 'difference between the middle scores',
       group: 'medians',
       method: `Percentile bootstrap of the difference of medians (Wilcox 2012, 5.4.2), ${context.resamples} resamples within each group, seed ${context.seed}.`,

@@ -201,7 +201,7 @@ function groupsBootstrapT(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'yuen-boot-t',
-      label: `difference of ${context.trim} % trimmed means, bootstrap-t`,
+      label: `${context.trim} % trimmed means, bootstrap-t`,
       quantity: 'difference between the typical scores',
       group: context.trim === 0 ? 'means, separate variances' : 'trimmed means',
       method: `Bootstrap-t (Hall 1988; Wilcox 2012, 5.3): |t| of groups resampled about their own trimmed means gives the critical value, ${drawn(context)}; symmetric, SE of Yuen 1974.`,
@@ -232,7 +232,7 @@ function groupsBca(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'yuen-bca',
-      label: `difference of ${context.trim} % trimmed means, BCa`,
+      label: `${context.trim} % trimmed means, BCa`,
       quantity: 'difference between the typical scores',
       group: context.trim === 0 ? 'means, separate variances' : 'trimmed means',
       method: `BCa bootstrap (Efron 1987): percentile limits moved for bias and acceleration, ${context.resamples} resamples within each group, seed ${context.seed}; from ${LEAST_FOR_BCA} participants a group on.`,
@@ -256,7 +256,7 @@ function permutedGroups(samples: Samples, context: RowContext): Finding {
     context,
     {
       estimator: 'permutation-groups',
-      label: 'difference of means, permutation',
+      label: 'means, permutation',
       quantity: 'difference of means',
       group: 'means, separate variances',
       method: `Pitman 1937: participants relabelled between the groups, ${permuted?.how ?? 'not done'}; drawn relabellings by Welch's t (Janssen 1997), (b + 1) / (B + 1). If nothing is going on scores are interchangeable between the groups.`,
