@@ -14,7 +14,7 @@ const single = pathToFileURL(resolve('dist/standfast.html')).href;
 describe('the built page', () => {
   test('by hand: opens served on the first demo, every cell with its result', async () => {
     const { page } = await harness.open();
-    expect(await page.locator('main [data-cell]').count()).toBe(8);
+    expect(await page.locator('main [data-cell]').count()).toBe(10);
     expect(await page.locator('[data-part="failed"], [data-part="unknown"]').count()).toBe(0);
     expect(await page.locator('[data-part="strip-counts"]').textContent()).toMatch(
       /^\s*supported in \d+ of \d+ analyses/,
