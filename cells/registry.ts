@@ -14,6 +14,7 @@ import type { Registry } from './kind.ts';
 import { noteKind } from './note/kind.ts';
 import { reshapeKind } from './reshape/kind.ts';
 import { scoreKind } from './score/kind.ts';
+import { sensitivityKind } from './sensitivity/kind.ts';
 import { standingKind } from './standing/kind.ts';
 
 /** Every cell kind by its name in saved files, in the order of the "Then ..." list. */
@@ -28,6 +29,7 @@ export const registry = guardAll({
   comparison: comparisonKind,
   association: associationKind,
   claim: claimKind,
+  sensitivity: sensitivityKind,
   influence: influenceKind,
   'error-rates': errorRatesKind,
   note: noteKind,

@@ -10,6 +10,7 @@ import type { Computed, ViewContext } from './kind.ts';
 import { noteView } from './note/view.ts';
 import type { KindName } from './registry.ts';
 import { scoreView } from './score/view.ts';
+import { sensitivityView } from './sensitivity/view.ts';
 import { standingView } from './standing/view.ts';
 
 /** Draws what a cell came to. */
@@ -30,6 +31,7 @@ export const views: Readonly<Record<KindName, View>> = {
   comparison: comparisonView,
   association: associationView,
   claim: claimView,
+  sensitivity: sensitivityView,
   influence: influenceView,
   'error-rates': ratesView,
   note: noteView,

@@ -1,11 +1,7 @@
-import { estimatorOf } from '../../src/analysis/estimators.ts';
 import { JOINT_STATISTICS, type Joint, type JointStatistic } from '../../src/analysis/joint.ts';
-import type { GridPoint } from '../../src/analysis/joint-plan.ts';
-import type { ScoreSpec } from '../../src/analysis/score.ts';
-import type { Sweep } from '../../src/analysis/sweep.ts';
 import { defineKind } from '../kind.ts';
-import { count, pValue } from '../numbers.ts';
-import { runJoint } from '../run-joint.ts';
+import { count } from '../numbers.ts';
+import { enteringPlaces, pointOf, runJoint, sayJoint } from '../run-joint.ts';
 
 export type JointSettings = {
   /** The joint statistic the plan names. */
@@ -48,8 +44,11 @@ export const jointKind = defineKind<
       ? []
       : ['The joint statistic of the strip cannot be read from this file.'],
   async compute(settings, { claim, sweep }, env) {
-    const places = entering(sweep, claim.claim.margin);
-    const points = places.map((place) => pointOf(sweep, place, claim.result.scores.score));
+    const places = enteringPlaces(sweep.specifications, claim.claim.margin);
+    const { score } = claim.result.scores;
+    const points = sweep.specifications
+      .filter((_, place) => places.includes(place))
+      .map((each) => pointOf(each, score));
     const { result } = claim;
     const request = { result, claim: claim.claim, points, relabellings: settings.relabellings, seed: env.seed };
     const joint = await runJoint(request, env);
@@ -66,27 +65,3 @@ export const jointKind = defineKind<
     rows: detail.joint?.rows.map(({ z, p, adjusted }) => [z, p, adjusted]) ?? null,
   }),
 });
-
-/** Rows that resample have no place inside a relabelling; with a margin only rows in the outcome's unit are judged. */
-function entering(sweep: Sweep, margin: number): number[] {
-  return sweep.specifications.flatMap(({ finding }, place) => {
-    const closed = estimatorOf(finding.estimator)?.closedForm === true;
-    return closed && finding.estimate !== null && (margin === 0 || finding.sameUnit) ? [place] : [];
-  });
-}
-
-function pointOf(sweep: Sweep, place: number, score: ScoreSpec): GridPoint {
-  const specification = sweep.specifications[place];
-  if (specification === undefined) throw new RangeError(`*place* must be a specification; got ${place}`);
-  const { rules, finding } = specification;
-  return { rules, score, estimator: finding.estimator, trim: finding.trim };
-}
-
-/** "joint p = .003 (average Z, 1,999 relabellings)". */
-export function sayJoint(joint: Joint | null, reason: string | null, statistic: JointStatistic): string {
-  if (joint === null) return `no joint p: ${reason ?? 'not worked out'}`;
-  const found = joint.statistics.find(({ name }) => name === statistic);
-  if (found === undefined || found.p === null) return 'no joint p: no analysis of the grid gives a test';
-  const how = joint.enumerated ? `all ${count(joint.relabellings)}` : count(joint.relabellings);
-  return `joint ${pValue(found.p)} (${statistic}, ${how} relabellings)`;
-}

@@ -2,6 +2,7 @@ import './style/base.css';
 import './style/page.css';
 import './style/cell.css';
 import './style/output.css';
+import './style/sensitivity.css';
 import './style/editor.css';
 import './style/foot.css';
 import './style/sheet.css';

@@ -1,8 +1,9 @@
+import { adoptFrom } from './adopt.ts';
 import { dataArrived, fileArrived, looksLikeRows } from './data-actions.ts';
 import { openSaved, openWorksheetText, wantedId } from './open-worksheet.ts';
 import type { Page } from './page.ts';
 
-/** What the whole page listens to: undo keys, paste, drop, leaving, and the address. */
+/** What the whole page listens to: undo keys, paste, drop, a state chosen in a figure, leaving, and the address. */
 export function listenToPage(page: Page): void {
   document.addEventListener('keydown', (event) => undoKey(page, event));
   document.addEventListener('pointerdown', (event) => pressedOutside(page, event));
@@ -10,6 +11,7 @@ export function listenToPage(page: Page): void {
   document.addEventListener('dragover', (event) => dragged(event));
   document.addEventListener('dragleave', (event) => event.relatedTarget === null && showDrop(false));
   document.addEventListener('drop', (event) => dropped(page, event));
+  document.addEventListener('sf-adopt', (event) => adoptFrom(page, event));
   window.addEventListener('pagehide', () => void page.parts.autosave.flush());
   document.addEventListener('visibilitychange', () => {
     if (document.visibilityState === 'hidden') void page.parts.autosave.flush();

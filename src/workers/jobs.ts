@@ -6,6 +6,9 @@ import type { Result } from '../analysis/compare.ts';
 import { compareSamples } from '../analysis/compare.ts';
 import { type RelabelSpec, relabelRates } from '../analysis/error-rates.ts';
 import { type BlindScores, flagExtremeBlind } from '../analysis/flagging.ts';
+import { runGrid } from '../analysis/grid.ts';
+import type { GridChoice } from '../analysis/grid-options.ts';
+import { gridRibbons } from '../analysis/grid-ribbons.ts';
 import { findInfluence, type InfluenceSpec } from '../analysis/influence.ts';
 import { countJoint } from '../analysis/joint.ts';
 import { type JointPlan, planJoint } from '../analysis/joint-plan.ts';
@@ -28,6 +31,14 @@ export const jobs = {
   pipeline: runPipeline,
   /** The strip's grid (analysis/sweep.ts). */
   sweep: (args: { readonly result: Result; readonly claim: ClaimSpec }) => sweepClaim(args.result, args.claim),
+  /** A grid of the reader's own choices, and the planned row along trim and cutoff (analysis/grid.ts). */
+  grid: ({
+    readonly result: Result;
+    readonly claim: ClaimSpec;
+    readonly choice: GridChoice;
+  }) => {
+    return { grid: runGrid(result, claim, choice), ribbons: gridRibbons(result, claim) };
+  },
   /** What relabelling a grid needs, and some of its relabellings (analysis/joint.ts). */
   jointPlan: planJoint,
   joint: (args: { readonly plan: JointPlan; readonly from: number; readonly to: number }, env: JobEnv) =>

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
-import { type JointSettings, jointKind, type StripJoint, sayJoint } from '../../cells/joint/kind.ts';
+import { type JointSettings, jointKind, type StripJoint } from '../../cells/joint/kind.ts';
 import { plainSentence } from '../../cells/kind.ts';
+import { sayJoint } from '../../cells/run-joint.ts';
 import type { ClaimValue } from '../../src/analysis/claim.ts';
 import { sweepClaim } from '../../src/analysis/sweep.ts';
 import { claimLower, resultOf, trialColumns } from '../support/joint.ts';
