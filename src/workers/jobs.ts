@@ -33,6 +33,10 @@ export const jobs = {
   sweep: (args: { readonly result: Result; readonly claim: ClaimSpec }) => sweepClaim(args.result, args.claim),
   /** A grid of the reader's own choices, and the planned row along trim and cutoff (analysis/grid.ts). */
   grid: ({
+    result,
+    claim,
+    choice,
+  }: {
     readonly result: Result;
     readonly claim: ClaimSpec;
     readonly choice: GridChoice;
