@@ -13,6 +13,7 @@ const MOST = 12;
  */
 export function hiddenColumns(table: Table): TableOut {
   const pooled = isWide(table);
+  const who = guessParticipant(table);
   return {
     title: 'columns',
     columns: [
@@ -25,7 +26,7 @@ export function hiddenColumns(table: Table): TableOut {
       column.name,
       column.type,
       pooled && column.type === 'number' ? 'counted together' : count(missingCount(column)),
-      column.type === 'number' ? '' : levelWords(column),
+      column.type === 'number' ? '' : levelWords(column, column.name === who),
     ]),
   };
 }
@@ -56,9 +57,10 @@ function missingWords(table: Table): string {
   return words.join(', ');
 }
 
-function levelWords(column: Column): string {
+/** Codes of participants are counted, not listed. */
+function levelWords(column: Column, codes: boolean): string {
   const levels = shownLevels(column, true);
-  return levels.length <= MOST ? levels.join(', ') : `${count(levels.length)} different`;
+  return levels.length <= MOST && !codes ? levels.join(', ') : `${count(levels.length)} different`;
 }
 
 /** Whether a row is a participant: no column tells participants apart, or each stands in one row. */
