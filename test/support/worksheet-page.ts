@@ -80,9 +80,12 @@ export async function tickIn(page: Page, cell: Locator, key: string, values: rea
   await blankIn(cell, key).click();
   for (const box of await page.locator('[data-part="editor"] input[type=checkbox]').all()) {
     const wanted = values.includes((await box.getAttribute('data-value')) ?? '');
-    if ((await box.isChecked()) !== wanted) await box.click();
+    if ((await box.isChecked()) === wanted) continue;
+    // The foot may stand over the end of a long list: a reader scrolls.
+    await box.evaluate((each) => each.scrollIntoView({ block: 'center' }));
+    await box.click();
   }
-  await page.keyboard.press('Escape');
+  await page.locator('[data-part="editor"] input[type=checkbox]').first().press('Escape');
   await waitForIdle(page);
 }
 
