@@ -7,8 +7,11 @@ function isShared(value: Json): boolean {
 }
 
 function isList(value: Json): boolean {
-  return Array.isArray(value) && value.every((each) => typeof each === 'string' || typeof each === 'number');
+  return Array.isArray(value) && value.every((each) => typeof each === 'string');
 }
+
+/** Numbers that every kind has for itself: they are never shared, and never none. */
+const OWN_NUMBERS = new Set(['alpha', 'resamples', 'relabellings', 'runs']);
 
 /** Whether a value can stand where a kind's own settings hold `usual`; null stands for a number or text not given. */
 function stands(usual: Json, value: Json): boolean {
@@ -23,6 +26,7 @@ function stands(usual: Json, value: Json): boolean {
 export function settingsFit(own: Settings, settings: Settings): boolean {
   return Object.entries(own).every(([key, usual]) => {
     const value = settings[key];
+    if (OWN_NUMBERS.has(key) && value !== undefined && typeof value !== 'number') return false;
     return value === undefined || stands(usual, value);
   });
 }

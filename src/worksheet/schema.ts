@@ -23,7 +23,7 @@ export const BOUNDS = {
   cells: 2_000,
   shared: 200,
   dataBlocks: 50,
-  columns: 200,
+  columns: 16_384,
   rows: 5_000_000,
   levels: 5_000_000,
   warnings: 10_000,
@@ -32,7 +32,25 @@ export const BOUNDS = {
   textLength: 1_000_000,
 } as const;
 
-const id = textLike(/^[^\p{Cc}]{1,200}$/u, 'an id of 1 to 200 characters');
+const reference = textLike(/^[^\p{Cc}]{1,200}$/u, 'an id of 1 to 200 characters');
+// The page finds its parts by selectors such as [data-cell="c1"].
+const idText = textLike(/^[^\p{Cc}"\\]{1,200}$/u, 'an id of 1 to 200 characters without quotation marks');
+
+/** What results and settings are looked up by: never a name that every object has of itself. */
+const id: Check = (value, place) => {
+  idText(value, place);
+  apart(value as string, place);
+};
+
+const kindName: Check = (value, place) => {
+  text(200, 1)(value, place);
+  apart(value as string, place);
+};
+
+function apart(key: string, place: string): void {
+  if (key in Object.prototype || key === 'prototype') throw new Fault(place, `must not be ${nameOf(key)}`);
+}
+
 const name = text(BOUNDS.nameLength);
 const hash = textLike(/^[0-9a-f]{64}$/, '64 hexadecimal digits');
 const when = textLike(
@@ -52,7 +70,7 @@ const shared = object({
 });
 
 const cell = object(
-  { id, kind: text(200, 1), version: wholeNumber(1, 1_000_000), settings: anyObject, from: table(100, id) },
+  { id, kind: kindName, version: wholeNumber(1, 1_000_000), settings: anyObject, from: table(100, reference) },
   { leftOut: boolean },
 );
 
@@ -96,7 +114,8 @@ const levelColumn: Check = (value, place) => {
   for (let i = 0; i < codes.length; i++) code(codes[i], `${place}.codes[${i}]`);
 };
 
-const dataBlock: Check = (value, place) => {
+/** Checks a data block, so that what is read from a data file is never more than a worksheet may hold. */
+export const checkDataBlock: Check = (value, place) => {
   object({
     id,
     name,
@@ -131,7 +150,7 @@ const parts = object({
   title: name,
   shared: list(BOUNDS.shared, shared),
   cells: list(BOUNDS.cells, cell),
-  data: list(BOUNDS.dataBlocks, dataBlock),
+  data: list(BOUNDS.dataBlocks, checkDataBlock),
   opening,
   log: list(BOUNDS.logEntries, logEntry),
   reference: orNull(held),

@@ -4,7 +4,7 @@ import { type Kind, plainSentence, type Settings } from '../../cells/kind.ts';
 import { registry } from '../../cells/registry.ts';
 import { contextOf, run } from '../support/kind-run.ts';
 
-const own = { what: 'trial', names: [], limit: null, alpha: 0.05, on: true } as const;
+const own = { what: 'trial', names: [], limit: null, alpha: 0.05, cutoff: 2, on: true } as const;
 const context = contextOf();
 
 /** Says what it was given, so that one sees which settings arrive. */
@@ -19,16 +19,20 @@ const telling = {
 } satisfies Kind;
 
 describe('settings that a kind can read', () => {
-  it('by hand: numbers may be shared or none, lists hold texts or numbers, unknown parts are let be', () => {
+  it('by hand: numbers may be shared or none, lists hold texts, unknown parts are let be', () => {
     expect(
-      settingsFit(own, { ...own, limit: { shared: 'trim' }, alpha: { shared: 'a' }, names: ['p1'], more: {} }),
+      settingsFit(own, { ...own, limit: { shared: 'trim' }, cutoff: { shared: 'a' }, names: ['p1'], more: {} }),
     ).toBe(true);
     expect(settingsFit(own, { limit: 3 })).toBe(true);
     for (const wrong of [
       { what: 3 },
       { names: 'p1' },
       { names: [{}] },
+      { names: ['p1', 3] },
       { alpha: 'x' },
+      { alpha: null },
+      { alpha: { shared: 'a' } },
+      { cutoff: 'x' },
       { limit: {} },
       { on: 1 },
       { what: null },

@@ -45,6 +45,10 @@ describe('parseWorksheet', () => {
     ['settings that are a list', 'cells[0].settings', (w) => (w.cells[0].settings = [])],
     ['a port that reads a number', 'cells[0].from.x', (w) => (w.cells[0].from = { x: 3 })],
     ['an empty id', 'cells[0].id', (w) => (w.cells[0].id = '')],
+    ['an id that would end a selector', 'cells[0].id', (w) => (w.cells[0].id = 'a"]')],
+    ['an id that every object has of itself', 'cells[0].id', (w) => (w.cells[0].id = 'constructor')],
+    ['a shared id that every object has of itself', 'shared[0].id', (w) => (w.shared[0].id = '__proto__')],
+    ['a kind that every object has of itself', 'cells[0].kind', (w) => (w.cells[0].kind = 'toString')],
     ['an id with a line break', 'cells[0].id', (w) => (w.cells[0].id = 'a\nb')],
     ['two cells of one id', 'cells[1].id', (w) => w.cells.push(w.cells[0])],
     ['two shared numbers of one id', 'shared[1].id', (w) => w.shared.push(w.shared[0])],
@@ -86,10 +90,10 @@ describe('parseWorksheet', () => {
       (w) => (w.cells = Array.from({ length: 2001 }, (_, i) => cell(`c${i}`, 'note'))),
     ],
     [
-      'more than 200 columns',
+      'more than 16,384 columns',
       'data[0].columns',
       (w) =>
-        (w.data[0].columns = Array.from({ length: 201 }, (_, i) => ({
+        (w.data[0].columns = Array.from({ length: 16_385 }, (_, i) => ({
           name: `x${i}`,
           type: 'number',
           values: [1, 2],
