@@ -64,10 +64,14 @@ export function remember(id: string): void {
   }
 }
 
-/** The worksheet named in the address. */
+/** The worksheet named in the address; a name cut off in the middle of a letter is none. */
 export function namedId(): string | null {
   const named = /^#w=(.+)$/.exec(location.hash)?.[1];
-  return named === undefined ? null : decodeURIComponent(named);
+  try {
+    return named === undefined ? null : decodeURIComponent(named);
+  } catch {
+    return null;
+  }
 }
 
 /** The worksheet named in the address, or the one open last. */

@@ -119,7 +119,7 @@ describe('a browser that keeps nothing', () => {
     expect(Object.values(await statusesOf(page)).every((status) => status === 'fresh')).toBe(true);
     expect(await stripOf(page)).toMatch(/supported|undecided|contradicted/);
     await page.locator('[data-part="save"]').click();
-    const saved = await downloadOf(page, () => page.locator('[data-part="save-file"]').click());
+    const saved = await downloadOf(page, () => page.locator('[data-part="save-json"]').click());
     expect(JSON.parse(saved.bytes.toString('utf8'))).toMatchObject({ shared: [{ value: 19 }] });
     await page.locator('[data-part="worksheets"]').click();
     await page.locator('[data-demo^="hearing"]').click();

@@ -17,7 +17,7 @@ export interface OpenOptions {
 
 export interface OpenedPage {
   readonly page: Page;
-  /** Console errors, thrown errors, policy violations and requests to anywhere else, in order; a test takes out its own. */
+  /** Console errors and warnings, thrown errors, policy violations and requests to anywhere else, in order; a test takes out its own. */
   readonly problems: string[];
   /** Resolves when every cell is settled and the picture of it is painted. */
   idle(): Promise<void>;
@@ -33,7 +33,7 @@ export interface PageHarness {
 
 async function watch(page: Page, origin: string, problems: string[]): Promise<void> {
   page.on('console', (message) => {
-    if (message.type() === 'error') problems.push(`console: ${message.text()}`);
+    if (['error', 'warning'].includes(message.type())) problems.push(`console: ${message.text()}`);
   });
   page.on('pageerror', (error) => problems.push(`thrown: ${error.message}`));
   page.on('crash', () => problems.push('the page crashed'));
