@@ -1,9 +1,9 @@
 /** A grid of rows of two groups under relabelling: sorted once, every relabelling is one walk that fills two groups. */
-import { noSpread } from './inference.ts';
+import { largestSize } from './inference.ts';
 import { ranks } from './order.ts';
 import { rankSumZ } from './relabel-ranks.ts';
 import { type CentreOut, centreOutFor, fillCentreOut } from './relabel-sums.ts';
-import { normalFromT } from './relabel-z.ts';
+import { replaceByNormal } from './relabel-z.ts';
 import { pairDifference, selectKth } from './selection.ts';
 
 /** A row whose estimate and test the kernel gives. */
@@ -33,11 +33,16 @@ export class RelabelledGroups {
   /** Scores about their pooled median, in that order. */
   readonly #scores: Float64Array;
   readonly #ranks: Float64Array;
-  readonly #size: number;
+  /** Square of the spread that is nothing but rounding error of the largest score. */
+  readonly #grain: number;
   readonly #first: Float64Array;
   readonly #second: Float64Array;
   readonly #sums: readonly [CentreOut, CentreOut];
   readonly #trimAt: readonly number[];
+  /** 1 / k for every count of scores. */
+  readonly #inverse: Float64Array;
+  /** 1 / df of each row under the labels at hand; 0 where its place holds no t. */
+  readonly #inverseDf: Float64Array;
   readonly #rankZ: ((u: number, n1: number) => number) | null;
   #n1 = 0;
   #n2 = 0;
@@ -54,18 +59,20 @@ export class RelabelledGroups {
     const middle = n === 0 ? 0 : (scores[this.#order[n >> 1] as number] as number);
     const raw = Float64Array.from(this.#order, (i) => scores[i] as number);
     this.#scores = raw.map((score) => score - middle);
-    this.#size = raw.reduce((size, score) => Math.max(size, Math.abs(score)), 0);
+    this.#grain = (4 * Number.EPSILON * largestSize(raw)) ** 2;
     this.#ranks = ranks(raw).ranks;
     this.#first = new Float64Array(n);
     this.#second = new Float64Array(n);
     this.#rows = rows;
+    this.#inverse = Float64Array.from({ length: n + 1 }, (_, k) => 1 / k);
+    this.#inverseDf = new Float64Array(rows.length);
     const trims = rows.map((row) => (row.row === 'yuen' ? row.trim : 0));
     this.#sums = [centreOutFor(trims), centreOutFor(trims)];
     this.#trimAt = trims.map((trim) => this.#sums[0].trims.indexOf(trim));
     this.#rankZ = rows.some((row) => row.row === 'rank-sum') ? rankSumZ(this.#ranks) : null;
   }
 
-  /** @param labels 0 = first group, anything else second, one a unit */
+  /** @param labels 0 = first group, 1 = second, one a unit */
   run(labels: Uint8Array, estimates: Float64Array, z: Float64Array, at: number): void {
     this.#split(labels);
     const empty = this.#n1 === 0 || this.#n2 === 0;
@@ -76,10 +83,12 @@ export class RelabelledGroups {
     for (let i = 0; i < this.#rows.length; i++) {
       const row = this.#rows[i] as GroupRow;
       z[at + i] = 0;
+      this.#inverseDf[i] = 0;
       if (empty) estimates[at + i] = Number.NaN;
       else if (row.row === 'rank-sum') this.#rankSumRow(estimates, z, at + i);
-      else this.#tRow(row.row === 'student', this.#trimAt[i] as number, estimates, z, at + i);
+      else this.#tRow(i, row.row === 'student', estimates, z, at + i);
     }
+    replaceByNormal(z, at, this.#inverseDf, this.#rows.length);
   }
 
   #split(labels: Uint8Array): void {
@@ -89,23 +98,33 @@ export class RelabelledGroups {
     const second = this.#second;
     const n = order.length;
     let n1 = 0;
-    let rankSum = 0;
     for (let k = 0; k < n; k++) {
       const score = scores[k] as number;
       // Both are written and one is kept: which one is up to chance, and a branch on chance costs more than a store.
-      const isFirst = labels[order[k] as number] === 0 ? 1 : 0;
       first[n1] = score;
       second[k - n1] = score;
-      rankSum += isFirst * (this.#ranks[k] as number);
-      n1 += isFirst;
+      n1 += 1 - (labels[order[k] as number] as number);
     }
     this.#n1 = n1;
     this.#n2 = n - n1;
-    this.#rankSum = rankSum;
+    if (this.#rankZ !== null) this.#sumRanks(labels);
   }
 
-  #tRow(pooled: boolean, j: number, estimates: Float64Array, z: Float64Array, at: number): void {
-    const [a, b] = this.#sums;
+  #sumRanks(labels: Uint8Array): void {
+    const order = this.#order;
+    const ranksInOrder = this.#ranks;
+    let sum = 0;
+    for (let k = 0; k < order.length; k++) {
+      if (labels[order[k] as number] === 0) sum += ranksInOrder[k] as number;
+    }
+    this.#rankSum = sum;
+  }
+
+  /** Leaves t in the row's place of z, and 1 / df beside it. */
+  #tRow(i: number, pooled: boolean, estimates: Float64Array, z: Float64Array, at: number): void {
+    const j = this.#trimAt[i] as number;
+    const a = this.#sums[0];
+    const b = this.#sums[1];
     const h1 = this.#n1 - 2 * (a.g[j] as number);
     const h2 = this.#n2 - 2 * (b.g[j] as number);
     const estimate = (a.trimmed[j] as number) - (b.trimmed[j] as number);
@@ -113,17 +132,20 @@ export class RelabelledGroups {
     if (h1 < LEAST || h2 < LEAST) return;
     const q1 = a.squares[j] as number;
     const q2 = b.squares[j] as number;
-    if (noSpread(Math.sqrt((q1 + q2) / (this.#n1 + this.#n2 - 2)), this.#size)) return;
+    if (!(q1 + q2 > this.#grain * (this.#n1 + this.#n2 - 2))) return;
     if (pooled) {
       const df = h1 + h2 - 2;
-      z[at] = normalFromT(estimate / Math.sqrt(((q1 + q2) / df) * (1 / h1 + 1 / h2)), df);
+      z[at] = estimate / Math.sqrt(((q1 + q2) / df) * (1 / h1 + 1 / h2));
+      this.#inverseDf[i] = 1 / df;
       return;
     }
-    const d1 = q1 / (h1 * (h1 - 1));
-    const d2 = q2 / (h2 * (h2 - 1));
+    const v1 = this.#inverse[h1 - 1] as number;
+    const v2 = this.#inverse[h2 - 1] as number;
+    const d1 = q1 * v1 * (this.#inverse[h1] as number);
+    const d2 = q2 * v2 * (this.#inverse[h2] as number);
     const share = d1 / (d1 + d2);
-    const df = 1 / ((share * share) / (h1 - 1) + ((1 - share) * (1 - share)) / (h2 - 1));
-    z[at] = normalFromT(estimate / Math.sqrt(d1 + d2), df);
+    z[at] = estimate / Math.sqrt(d1 + d2);
+    this.#inverseDf[i] = share * share * v1 + (1 - share) * (1 - share) * v2;
   }
 
   #rankSumRow(estimates: Float64Array, z: Float64Array, at: number): void {

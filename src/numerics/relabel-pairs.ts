@@ -5,7 +5,7 @@ import { decimalTies } from './rank-test.ts';
 import { middleOf } from './relabel-groups.ts';
 import { signedRankZ } from './relabel-ranks.ts';
 import { type CentreOut, centreOutFor, fillCentreOut } from './relabel-sums.ts';
-import { normalFromT } from './relabel-z.ts';
+import { replaceByNormal } from './relabel-z.ts';
 import { walshAverage } from './selection.ts';
 
 /** A row whose estimate and test the kernel gives. */
@@ -46,6 +46,8 @@ function sortedOnce(values: Float64Array): Order {
  */
 export class RelabelledPairs {
   readonly #rows: readonly PairRow[];
+  /** 1 / df of each row under the labels at hand; 0 where its place holds no t. */
+  readonly #inverseDf: Float64Array;
   readonly #units: Int32Array;
   readonly #a: Float64Array;
   readonly #b: Float64Array;
@@ -79,6 +81,7 @@ export class RelabelledPairs {
     for (let i = 0; i < a.length; i++) if (!Number.isNaN(a[i]) && !Number.isNaN(b[i])) units.push(i);
     const n = units.length;
     this.#rows = rows;
+    this.#inverseDf = new Float64Array(rows.length);
     this.#units = Int32Array.from(units);
     this.#a = Float64Array.from(units, (i) => a[i] as number);
     this.#b = Float64Array.from(units, (i) => b[i] as number);
@@ -134,6 +137,7 @@ export class RelabelledPairs {
     fillCentreOut(this.#sums, this.#sorted, n);
     if (this.#pooled !== null) this.#sortMargins(this.#pooled);
     for (let i = 0; i < this.#rows.length; i++) this.#row(i, estimates, z, at + i);
+    replaceByNormal(z, at, this.#inverseDf, this.#rows.length);
   }
 
   /** Differences in ascending order: the negative ones by falling size, then the others by rising size. */
@@ -174,13 +178,15 @@ export class RelabelledPairs {
     const row = this.#rows[i] as PairRow;
     const j = this.#trimAt[i] as number;
     z[at] = 0;
-    if (row.row === 'marginal') this.#marginalRow(j, estimates, z, at);
+    this.#inverseDf[i] = 0;
+    if (row.row === 'marginal') this.#marginalRow(i, j, estimates, z, at);
     else if (row.row === 'signed-rank') this.#signedRankRow(estimates, z, at);
-    else this.#differencesRow(row, j, estimates, z, at);
+    else this.#differencesRow(row, i, j, estimates, z, at);
   }
 
   #differencesRow(
     row: Exclude<PairRow, { row: 'marginal' | 'signed-rank' }>,
+    i: number,
     j: number,
     estimates: Float64Array,
     z: Float64Array,
@@ -200,7 +206,8 @@ export class RelabelledPairs {
       row.row === 'winsorized'
         ? (sd * (n - 1)) / ((h - 1) * Math.sqrt(n))
         : (100 * sd) / ((row.row === 'trimmed' ? 100 - 2 * row.trim : 100) * Math.sqrt(n));
-    z[at] = normalFromT(estimate / se, h - 1);
+    z[at] = estimate / se;
+    this.#inverseDf[i] = 1 / (h - 1);
   }
 
   #sizeOf(row: 'trimmed' | 'winsorized', g: number): number {
@@ -209,7 +216,7 @@ export class RelabelledPairs {
     return Math.max(Math.abs(this.#sorted[g] as number), Math.abs(this.#sorted[n - 1 - g] as number));
   }
 
-  #marginalRow(j: number, estimates: Float64Array, z: Float64Array, at: number): void {
+  #marginalRow(i: number, j: number, estimates: Float64Array, z: Float64Array, at: number): void {
     const [x, y] = this.#margins;
     const n = this.#units.length;
     const g = x.g[j] as number;
@@ -220,7 +227,8 @@ export class RelabelledPairs {
     const products = this.#winsorizedProducts(g, x.winsorized[j] as number, y.winsorized[j] as number);
     const spread = ((x.squares[j] as number) + (y.squares[j] as number) - 2 * products) / (n - 1);
     if (noSpread(Math.sqrt(Math.max(0, spread)), this.#largestScore)) return;
-    z[at] = normalFromT(estimate / Math.sqrt(((n - 1) * spread) / (h * (h - 1))), h - 1);
+    z[at] = estimate / Math.sqrt(((n - 1) * spread) / (h * (h - 1)));
+    this.#inverseDf[i] = 1 / (h - 1);
   }
 
   /** Sum of products of the deviations of the winsorized pairs. */

@@ -75,7 +75,50 @@ error_rates_r <- function(experiments, b) {
   function() rowMeans(replicate(experiments, one(rnorm(n), rnorm(n))))
 }
 
-work_of <- list(bootstrap_boot = bootstrap_boot, bootstrap_t_r = bootstrap_t_r, error_rates_r = error_rates_r)
+# Trimmed mean, squared standard error and degrees of freedom of a group.
+trimmed_parts <- function(x, trim) {
+  n <- length(x)
+  g <- floor(trim * n / 100)
+  h <- n - 2 * g
+  s <- sort(x)
+  w <- pmin(pmax(s, s[g + 1]), s[n - g])
+  c(sum(s[(g + 1):(n - g)]) / h, var(w) * (n - 1) / (h * (h - 1)), h - 1)
+}
+
+joint_grid_r <- function(n, rules, relabellings) {
+  x <- scores(2 * n)
+  steps <- (0:12) / 4
+  q <- quantile(x, c(0.25, 0.75), names = FALSE)
+  marks <- c(
+    list(rep(TRUE, 2 * n)),
+    lapply(steps, function(k) abs(x - median(x)) <= (1.5 + k) * mad(x)),
+    lapply(steps, function(k) abs(x - mean(x)) <= (1.5 + k) * sd(x)),
+    lapply(steps, function(k) x >= q[1] - (0.5 + k) * diff(q) & x <= q[2] + (0.5 + k) * diff(q))
+  )[seq_len(rules)]
+  trims <- c(0, 5, 10, 15, 20, 25)
+  function() {
+    joint <- numeric(relabellings)
+    for (b in seq_len(relabellings)) {
+      first <- sample(rep(c(TRUE, FALSE), each = n))
+      z <- numeric(0)
+      for (mark in marks) {
+        for (v in list(x, log(x))) {
+          for (trim in trims) {
+            p <- trimmed_parts(v[mark & first], trim)
+            r <- trimmed_parts(v[mark & !first], trim)
+            t <- (p[1] - r[1]) / sqrt(p[2] + r[2])
+            df <- (p[2] + r[2])^2 / (p[2]^2 / p[3] + r[2]^2 / r[3])
+            z <- c(z, sign(t) * qnorm(pt(-abs(t), df), lower.tail = FALSE))
+          }
+        }
+      }
+      joint[b] <- mean(z)
+    }
+    joint
+  }
+}
+
+work_of <- list(bootstrap_boot = bootstrap_boot, bootstrap_t_r = bootstrap_t_r, error_rates_r = error_rates_r, joint_grid_r = joint_grid_r)
 
 input <- file("stdin", "r")
 while (length(line <- readLines(input, n = 1)) > 0) {

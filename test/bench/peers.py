@@ -5,7 +5,7 @@ import time
 
 import numpy as np
 import pandas as pd
-from scipy import stats
+from scipy import special, stats
 
 CHUNK = 4_000_000
 
@@ -239,6 +239,102 @@ def error_rates_scipy(experiments, b):
     return work
 
 
+TRIMS = np.array([0, 5, 10, 15, 20, 25])
+
+
+def kept_sets(n, rules):
+    """Marks of those within each rule's limits: no rule, then cutoffs of MAD, SD and quartile fences."""
+    x = scores(2 * n)
+    steps = np.arange(13) / 4
+    middle = np.median(x)
+    mad = 1.4826 * np.median(np.abs(x - middle))
+    low, high = np.quantile(x, [0.25, 0.75])
+    marks = [np.ones(2 * n, bool)]
+    marks += [np.abs(x - middle) <= (1.5 + k) * mad for k in steps]
+    marks += [np.abs(x - x.mean()) <= (1.5 + k) * x.std(ddof=1) for k in steps]
+    marks += [(x >= low - (0.5 + k) * (high - low)) & (x <= high + (0.5 + k) * (high - low)) for k in steps]
+    return x, marks[:rules]
+
+
+def labels_of(n, relabellings, rng):
+    """The data's own labels first."""
+    first = np.argsort(rng.random((relabellings, 2 * n)), axis=1) < n
+    return np.concatenate([[np.arange(2 * n) < n], first])
+
+
+def joint_p(estimates, z):
+    """Median raw estimate, average Z, share significant, largest |Z|: how often each reaches the data's."""
+    sure = stats.norm.ppf(0.975)
+    share = np.maximum((z >= sure).mean(axis=1), (z <= -sure).mean(axis=1))
+    found = np.stack([np.abs(np.median(estimates, axis=1)), np.abs(z.mean(axis=1)), share, np.abs(z).max(axis=1)])
+    return (1 + np.sum(found[:, 1:] >= found[:, :1], axis=1)) / found.shape[1]
+
+
+def group_parts(values, n):
+    """Trimmed mean, (n-1) winsorized variance and h for every trim of rows sorted into their first n places."""
+    total = np.concatenate([np.zeros((len(values), 1)), np.cumsum(values, axis=1)], axis=1)
+    square = np.concatenate([np.zeros((len(values), 1)), np.cumsum(values * values, axis=1)], axis=1)
+    rows = np.arange(len(values))[:, None]
+    g = TRIMS * n[:, None] // 100
+    last = n[:, None] - g
+    low, high = values[rows, g], values[rows, last - 1]
+    sums = total[rows, last] - total[rows, g]
+    mean = (sums + g * (low + high)) / n[:, None]
+    q = square[rows, last] - square[rows, g] + g * (low * low + high * high) - n[:, None] * mean * mean
+    return sums / (last - g), q, last - g
+
+
+def joint_grid_numpy(n, rules, relabellings):
+    """Each rule's scores sorted once; labels bring them into two sorted groups, cumulative sums give every trim."""
+    x, marks = kept_sets(n, rules)
+    rng = np.random.default_rng(1)
+
+    def work():
+        labels = labels_of(n, relabellings, rng)
+        estimates, z = [], []
+        for mark in marks:
+            order = np.flatnonzero(mark)[np.argsort(x[mark])]
+            first = labels[:, order]
+            n1 = first.sum(axis=1)
+            n2 = len(order) - n1
+            place1 = np.argsort(~first, axis=1, kind="stable")
+            place2 = np.argsort(first, axis=1, kind="stable")
+            for log in (False, True):
+                v = np.log(x[order]) if log else x[order]
+                v = v - np.median(v)
+                m1, q1, h1 = group_parts(v[place1], n1)
+                m2, q2, h2 = group_parts(v[place2], n2)
+                d1, d2 = q1 / (h1 * (h1 - 1)), q2 / (h2 * (h2 - 1))
+                df = (d1 + d2) ** 2 / (d1**2 / (h1 - 1) + d2**2 / (h2 - 1))
+                t = (m1 - m2) / np.sqrt(d1 + d2)
+                z.append(-np.sign(t) * special.ndtri(special.stdtr(df, -np.abs(t))))
+                if not log:
+                    estimates.append(m1 - m2)
+        return joint_p(np.concatenate(estimates, axis=1), np.concatenate(z, axis=1))
+
+    return work
+
+
+def joint_grid_scipy(n, rules, relabellings):
+    """Every specification under every relabelling by the library's own test."""
+    x, marks = kept_sets(n, rules)
+    rng = np.random.default_rng(1)
+
+    def work():
+        labels = labels_of(n, relabellings, rng)[1:]
+        found = []
+        for first in labels:
+            for mark in marks:
+                for v in (x, np.log(x)):
+                    a, b = v[mark & first], v[mark & ~first]
+                    for trim in TRIMS:
+                        test = stats.ttest_ind(a, b, equal_var=False, trim=trim / 100)
+                        found.append(np.sign(test.statistic) * stats.norm.isf(test.pvalue / 2))
+        return np.mean(found)
+
+    return work
+
+
 def trials(rows, people):
     """Trials of people under four conditions, in file order."""
     i = np.arange(rows)
@@ -336,6 +432,8 @@ WORK = {
         bootstrap_t_scipy,
         error_rates_numpy,
         error_rates_scipy,
+        joint_grid_numpy,
+        joint_grid_scipy,
         rule_scores_pandas,
         rule_step_pandas,
         shapiro_scipy,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { normalFromP, normalFromT } from '../../src/numerics/relabel-z.ts';
+import { normalFromInverse, normalFromP, normalFromT, replaceByNormal } from '../../src/numerics/relabel-z.ts';
 import { tTwoSided } from '../../src/numerics/tails/t.ts';
 
 describe('normalFromT', () => {
@@ -33,6 +33,18 @@ describe('normalFromT', () => {
     const z = normalFromT(1e200, 50);
     expect(z).toBeGreaterThan(36);
     expect(z).toBeLessThan(38);
+  });
+});
+
+describe('replaceByNormal', () => {
+  it('agrees with normalFromT, exactly, one after another; a place without degrees of freedom stays', () => {
+    const t = [0, 1e-9, -0.4, 1.9, -2.5, 3.9, 8, -40];
+    for (const df of [1, 5, 8, 23, 400]) {
+      const z = Float64Array.from([99, ...t, 7]);
+      replaceByNormal(z, 1, Float64Array.from([...t.map(() => 1 / df), 0]), t.length + 1);
+      expect([...z]).toEqual([99, ...t.map((each) => normalFromT(each, df)), 7]);
+      expect(normalFromInverse(1.9, 1 / df)).toBe(normalFromT(1.9, df));
+    }
   });
 });
 
