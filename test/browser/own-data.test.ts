@@ -65,7 +65,7 @@ async function keptEverywhere(page: Page, idle: () => Promise<void>): Promise<vo
   const decided = await decidedOf(page);
 
   await page.locator('[data-part="save"]').click();
-  const saved = await downloadOf(page, () => page.locator('[data-part="save-file"]').click());
+  const saved = await downloadOf(page, () => page.locator('[data-part="save-json"]').click());
   expect(saved.name).toBe('Load under two signals.standfast.json');
   const file = join(folder, saved.name);
   writeFileSync(file, saved.bytes);

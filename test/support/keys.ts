@@ -43,6 +43,7 @@ export async function chooseByKeys(page: Page, cell: string, key: string, value:
 /** Ticks the named boxes of a blank that are not ticked, and the other way round; by keys alone. */
 export async function tickByKeys(page: Page, cell: string, key: string, values: readonly string[]): Promise<void> {
   await openBlank(page, cell, key);
+  await page.locator('[data-part="editor"] input[type=checkbox]').first().waitFor();
   const boxes = await page.locator('[data-part="editor"] input[type=checkbox]:enabled').evaluateAll((all) =>
     all.map((each) => ({
       value: (each as HTMLInputElement).dataset.value ?? '',

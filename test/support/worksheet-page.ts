@@ -78,7 +78,9 @@ export async function chooseIn(page: Page, cell: Locator, key: string, value: st
 /** Opens a blank with the pointer and ticks those that are not ticked, and the other way round. */
 export async function tickIn(page: Page, cell: Locator, key: string, values: readonly string[]): Promise<void> {
   await blankIn(cell, key).click();
-  for (const box of await page.locator('[data-part="editor"] input[type=checkbox]').all()) {
+  const boxes = page.locator('[data-part="editor"] input[type=checkbox]');
+  await boxes.first().waitFor();
+  for (const box of await boxes.all()) {
     const wanted = values.includes((await box.getAttribute('data-value')) ?? '');
     if ((await box.isChecked()) === wanted) continue;
     // The foot may stand over the end of a long list: a reader scrolls.
