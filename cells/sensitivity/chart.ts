@@ -130,21 +130,12 @@ interface Frame {
   readonly unit: string;
 }
 
-function pictureSpec({ plot, left, height, count, step, unit }: Frame): Settings {
+type Channel = Readonly<Record<string, unknown>>;
+
+function pictureSpec(frame: Frame): Settings {
+  const { plot, left, height, count } = frame;
   const x = { field: 'x', type: 'quantitative', scale: { domain: [-0.5, Math.max(0.5, count - 0.5)] }, axis: null };
   const y = { field: 'y', type: 'quantitative', scale: { domain: [0, height], reverse: true }, axis: null };
-  const colour = {
-    field: 'verdict',
-    type: 'nominal',
-    legend: null,
-    scale: {
-      domain: ['supported', 'undecided', 'contradicted', 'not judged'],
-      range: ['var(--hold)', 'var(--loose)', 'var(--aside)', 'var(--soft)'],
-    },
-  };
-  const thin = Math.max(0.8, Math.min(3, step * 0.45));
-  const dot = Math.max(5, Math.min(46, step * step * 0.5));
-  const text = (dx: number, extra: object) => ({ type: 'text', align: 'right', baseline: 'middle', dx, ...extra });
   const spec = {
     width: plot,
     height,
@@ -153,80 +144,94 @@ function pictureSpec({ plot, left, height, count, step, unit }: Frame): Settings
     layer: [
       {
         data: { name: 'active' },
-        mark: { type: 'rule', strokeWidth: Math.max(4, step), opacity: 0.16 },
+        mark: { type: 'rule', strokeWidth: Math.max(4, frame.step), opacity: 0.16 },
         encoding: { x, color: { value: 'var(--ink)' } },
       },
-      {
-        data: { name: 'ticks' },
-        mark: { type: 'rule', strokeDash: [3, 3] },
-        transform: [{ filter: 'datum.zero' }],
-        encoding: { y, color: { value: 'var(--soft)' } },
-      },
-      {
-        data: { name: 'ticks' },
-        mark: text(-8, { fontSize: 11.5 }),
-        encoding: { y, x: { value: 0 }, text: { field: 'label', type: 'nominal' }, color: { value: 'var(--soft)' } },
-      },
-      {
-        data: { values: [{ label: unit }] },
-        mark: text(0, { fontSize: 12, align: 'left' }),
-        encoding: {
-          y: { value: 8 },
-          x: { value: 4 - left },
-          text: { field: 'label', type: 'nominal' },
-          color: { value: 'var(--soft)' },
-        },
-      },
-      {
-        data: { name: 'lines' },
-        transform: [{ filter: 'datum.low !== null' }],
-        mark: { type: 'rule', strokeWidth: thin, opacity: 0.8 },
-        encoding: { x, y: { ...y, field: 'low' }, y2: { field: 'high' }, color: colour },
-      },
-      {
-        data: { name: 'lines' },
-        mark: { type: 'point', filled: true, opacity: 1 },
-        encoding: {
-          x,
-          y,
-          shape: {
-            field: 'mark',
-            type: 'nominal',
-            legend: null,
-            scale: { domain: ['own', 'everyone', 'other'], range: ['square', 'triangle-up', 'circle'] },
-          },
-          size: { condition: { test: 'datum.mark === "other"', value: dot }, value: Math.max(60, dot * 1.6) },
-          color: { value: 'var(--ink)' },
-        },
-      },
-      {
-        data: { name: 'cells' },
-        mark: { type: 'point', shape: 'square', filled: true, opacity: 1 },
-        encoding: {
-          x,
-          y,
-          size: { value: Math.max(5, Math.min(64, step * step * 0.55)) },
-          color: { condition: { test: 'datum.mark === "own"', value: 'var(--hold)' }, value: 'var(--soft)' },
-        },
-      },
-      {
-        data: { name: 'words' },
-        transform: [{ filter: '!datum.head' }],
-        mark: text(-8, { fontSize: 12 }),
-        encoding: { y, x: { value: 0 }, text: { field: 'label', type: 'nominal' }, color: { value: 'var(--ink)' } },
-      },
-      {
-        data: { name: 'words' },
-        transform: [{ filter: 'datum.head' }],
-        mark: text(0, { fontSize: 12, align: 'left' }),
-        encoding: {
-          y,
-          x: { value: 4 - left },
-          text: { field: 'label', type: 'nominal' },
-          color: { value: 'var(--soft)' },
-        },
-      },
+      ...scaleLayers(y, frame),
+      ...estimateLayers(x, y, frame),
+      ...matrixLayers(x, y, frame),
     ],
   };
   return spec as unknown as Settings;
+}
+
+/** Words at a place of the margin; `at` counts from where the first analysis begins. */
+function words(
+  name: string,
+  y: Channel,
+  at: number,
+  style: { align: string; fontSize: number; colour: string },
+): Channel {
+  return {
+    data: { name },
+    mark: { type: 'text', baseline: 'middle', align: style.align, fontSize: style.fontSize },
+    encoding: { y, x: { value: at }, text: { field: 'label', type: 'nominal' }, color: { value: style.colour } },
+  };
+}
+
+/** The line of no difference, round numbers, and the unit. */
+function scaleLayers(y: Channel, { left, unit }: Frame): Channel[] {
+  const right = { align: 'right', fontSize: 11.5, colour: 'var(--soft)' };
+  return [
+    {
+      data: { name: 'ticks' },
+      mark: { type: 'rule', strokeDash: [3, 3] },
+      transform: [{ filter: 'datum.zero' }],
+      encoding: { y, color: { value: 'var(--soft)' } },
+    },
+    words('ticks', y, -8, right),
+    {
+      ...words('unit', y, 4 - left, { ...right, align: 'left', fontSize: 12 }),
+      data: { values: [{ label: unit, y: 8 }] },
+    },
+  ];
+}
+
+/** Intervals in the colour of their verdict, estimates by shape. */
+function estimateLayers(x: Channel, y: Channel, { step }: Frame): Channel[] {
+  const thin = Math.max(0.8, Math.min(3, step * 0.45));
+  const dot = Math.max(5, Math.min(46, step * step * 0.5));
+  const verdicts = ['supported', 'undecided', 'contradicted', 'not judged'];
+  const range = ['var(--hold)', 'var(--loose)', 'var(--aside)', 'var(--soft)'];
+  const colour = { field: 'verdict', type: 'nominal', legend: null, scale: { domain: verdicts, range } };
+  const shapes = { domain: ['own', 'everyone', 'other'], range: ['square', 'triangle-up', 'circle'] };
+  return [
+    {
+      data: { name: 'lines' },
+      transform: [{ filter: 'datum.low !== null' }],
+      mark: { type: 'rule', strokeWidth: thin, opacity: 0.8 },
+      encoding: { x, y: { ...y, field: 'low' }, y2: { field: 'high' }, color: colour },
+    },
+    {
+      data: { name: 'lines' },
+      mark: { type: 'point', filled: true, opacity: 1 },
+      encoding: {
+        x,
+        y,
+        shape: { field: 'mark', type: 'nominal', legend: null, scale: shapes },
+        size: { condition: { test: 'datum.mark === "other"', value: dot }, value: Math.max(60, dot * 1.6) },
+        color: { value: 'var(--ink)' },
+      },
+    },
+  ];
+}
+
+/** A mark for each option an analysis has, and the names of options and choices. */
+function matrixLayers(x: Channel, y: Channel, { step, left }: Frame): Channel[] {
+  const heads = words('words', y, 4 - left, { align: 'left', fontSize: 12, colour: 'var(--soft)' });
+  const options = words('words', y, -8, { align: 'right', fontSize: 12, colour: 'var(--ink)' });
+  return [
+    {
+      data: { name: 'cells' },
+      mark: { type: 'point', shape: 'square', filled: true, opacity: 1 },
+      encoding: {
+        x,
+        y,
+        size: { value: Math.max(5, Math.min(64, step * step * 0.55)) },
+        color: { condition: { test: 'datum.mark === "own"', value: 'var(--hold)' }, value: 'var(--soft)' },
+      },
+    },
+    { ...options, transform: [{ filter: '!datum.head' }] },
+    { ...heads, transform: [{ filter: 'datum.head' }] },
+  ];
 }

@@ -20,83 +20,69 @@ export function ribbonRows({ along, points, now }: Ribbon) {
   return { band: placed.filter((point) => !point.none), points: placed.filter((point) => point.none || point.now) };
 }
 
+type Channel = Readonly<Record<string, unknown>>;
+
 /** Estimate with its interval along one number, and p below on its own scale. */
 export function ribbonSpec({ along, points }: Ribbon, width: number, unit: string, alpha: number): Settings {
   const trim = along === 'trim';
   const domain = trim ? [0, 25] : [1.4, 4.7];
   const values = trim ? [0, 5, 10, 15, 20, 25] : [1.5, 2, 2.5, 3, 3.5, 4, 4.5];
   const labelExpr = trim ? 'datum.label + " %"' : 'datum.value === 4.5 ? "none" : datum.label';
-  const scale = { domain, nice: false };
   const axis = { values, labelExpr, title: trim ? 'trim at each end' : 'cutoff', grid: false };
-  const x = { field: 'x', type: 'quantitative', scale, axis: null };
-  const y = { type: 'quantitative', scale: { zero: true, nice: false, padding: 6 } };
-  const yAxis = { title: unit === '' ? 'estimate' : `estimate (${unit})`, tickCount: 4, grid: false };
+  const x = { field: 'x', type: 'quantitative', scale: { domain, nice: false }, axis: null };
   const place = { bounds: 'flush', width: Math.max(120, width - LEFT - 8) };
-  const upper = {
-    ...place,
-    height: HEIGHT,
-    layer: [
-      {
-        data: { values: [{ zero: 0 }] },
-        mark: { type: 'rule', strokeDash: [3, 3] },
-        encoding: { y: { ...y, field: 'zero', axis: yAxis }, color: { value: 'var(--soft)' } },
-      },
-      {
-        data: { name: 'band' },
-        mark: { type: 'area', opacity: 0.18 },
-        encoding: { x, y: { ...y, field: 'low' }, y2: { field: 'high' }, color: { value: 'var(--hold)' } },
-      },
-      {
-        data: { name: 'band' },
-        mark: { type: 'line', strokeWidth: 1.8 },
-        encoding: { x, y: { ...y, field: 'estimate' }, color: { value: 'var(--ink)' } },
-      },
-      {
-        data: { name: 'points' },
-        transform: [{ filter: 'datum.none' }],
-        mark: { type: 'rule', strokeWidth: 2 },
-        encoding: { x, y: { ...y, field: 'low' }, y2: { field: 'high' }, color: { value: 'var(--hold)' } },
-      },
-      {
-        data: { name: 'points' },
-        mark: { type: 'point', filled: true, opacity: 1 },
-        encoding: {
-          x,
-          y: { ...y, field: 'estimate' },
-          shape: { condition: { test: 'datum.now', value: 'square' }, value: 'triangle-up' },
-          size: { value: 72 },
-          color: { value: 'var(--ink)' },
-        },
-      },
-    ],
-  };
   const most = Math.max(2 * alpha, ...points.flatMap((point) => point.p ?? []));
-  const p = { type: 'quantitative', scale: { domain: [0, Math.min(1, 1.15 * most)], nice: false } };
-  const labels = `datum.value === 0 ? "0" : "${String(alpha).replace(/^0/, '')}"`;
-  const pAxis = { title: 'p', values: [0, alpha], labelExpr: labels, grid: false };
-  const lower = {
-    ...place,
-    height: P_HEIGHT,
-    layer: [
-      {
-        data: { values: [{ p: alpha }] },
-        mark: { type: 'rule', strokeDash: [3, 3] },
-        encoding: { y: { ...p, field: 'p', axis: pAxis }, color: { value: 'var(--soft)' } },
-      },
-      {
-        data: { name: 'band' },
-        mark: { type: 'line', strokeWidth: 1.4 },
-        encoding: { x: { ...x, axis }, y: { ...p, field: 'p' }, color: { value: 'var(--ink)' } },
-      },
-      {
-        data: { name: 'points' },
-        mark: { type: 'point', filled: true, size: 36, opacity: 1 },
-        encoding: { x: { ...x, axis }, y: { ...p, field: 'p' }, color: { value: 'var(--ink)' } },
-      },
+  const spec = {
+    padding: { left: 4, right: 8, top: 4, bottom: 4 },
+    spacing: 8,
+    vconcat: [
+      { ...place, height: HEIGHT, layer: estimateLayers(x, unit) },
+      { ...place, height: P_HEIGHT, layer: pLayers({ ...x, axis }, alpha, Math.min(1, 1.15 * most)) },
     ],
   };
-  const spec = { padding: { left: 4, right: 8, top: 4, bottom: 4 }, spacing: 8, vconcat: [upper, lower] };
   return spec as unknown as Settings;
+}
+
+function drawn(name: string, mark: Channel, encoding: Channel, colour: string): Channel {
+  return { data: { name }, mark, encoding: { ...encoding, color: { value: colour } } };
+}
+
+function level(value: number, mark: string, y: Channel): Channel {
+  const line = drawn('', { type: 'rule', strokeDash: [3, 3] }, { y: { ...y, field: mark } }, 'var(--soft)');
+  return { ...line, data: { values: [{ [mark]: value }] } };
+}
+
+function estimateLayers(x: Channel, unit: string): Channel[] {
+  const y = { type: 'quantitative', scale: { zero: true, nice: false, padding: 6 } };
+  const axis = { title: unit === '' ? 'estimate' : `estimate (${unit})`, tickCount: 4, grid: false };
+  const limits = { x, y: { ...y, field: 'low' }, y2: { field: 'high' } };
+  const estimate = { x, y: { ...y, field: 'estimate' } };
+  const none = drawn('points', { type: 'rule', strokeWidth: 2 }, limits, 'var(--hold)');
+  const shape = { condition: { test: 'datum.now', value: 'square' }, value: 'triangle-up' };
+  return [
+    level(0, 'zero', { ...y, axis }),
+    drawn('band', { type: 'area', opacity: 0.18 }, limits, 'var(--hold)'),
+    drawn('band', { type: 'line', strokeWidth: 1.8 }, estimate, 'var(--ink)'),
+    { ...none, transform: [{ filter: 'datum.none' }] },
+    drawn(
+      'points',
+      { type: 'point', filled: true, opacity: 1 },
+      { ...estimate, shape, size: { value: 72 } },
+      'var(--ink)',
+    ),
+  ];
+}
+
+function pLayers(x: Channel, alpha: number, most: number): Channel[] {
+  const p = { type: 'quantitative', scale: { domain: [0, most], nice: false } };
+  const labelExpr = `datum.value === 0 ? "0" : "${String(alpha).replace(/^0/, '')}"`;
+  const axis = { title: 'p', values: [0, alpha], labelExpr, grid: false };
+  const at = { x, y: { ...p, field: 'p' } };
+  return [
+    level(alpha, 'p', { ...p, axis }),
+    drawn('band', { type: 'line', strokeWidth: 1.4 }, at, 'var(--ink)'),
+    drawn('points', { type: 'point', filled: true, size: 36, opacity: 1 }, at, 'var(--ink)'),
+  ];
 }
 
 /** "Along the trim from 0 to 25 %: estimates from -96 to -80 ms, p from < .001 to .019." */

@@ -35,6 +35,27 @@ function sortedOnce(values: Float64Array): Order {
   return { place, value: Float64Array.from(place, (i) => values[i] as number) };
 }
 
+/** What a signed-rank test keeps under relabelling: ranks of the sizes, signs as they are, and Z of every sum. */
+interface SignedRanks {
+  readonly ranks: Float64Array;
+  readonly signs: Float64Array;
+  readonly z: (positive: number) => number;
+}
+
+/** Null where every difference is zero. */
+function signedRanksOf(d: Float64Array): SignedRanks | null {
+  const signs = decimalTies(d);
+  const used = signs.filter((value) => value !== 0);
+  if (used.length === 0) return null;
+  const own = ranks(used.map(Math.abs)).ranks;
+  const all = new Float64Array(d.length);
+  let at = 0;
+  signs.forEach((value, i) => {
+    if (value !== 0) all[i] = own[at++] as number;
+  });
+  return { ranks: all, signs, z: signedRankZ(own) };
+}
+
 /**
  * Rows of pairs under any exchange of the two scores within pairs.
  *
@@ -65,9 +86,7 @@ export class RelabelledPairs {
   readonly #x: Float64Array;
   readonly #y: Float64Array;
   readonly #flips: Uint8Array;
-  readonly #signRanks: Float64Array | null;
-  readonly #signSigns: Float64Array;
-  readonly #signZ: ((positive: number) => number) | null;
+  readonly #signs: SignedRanks | null;
   readonly #walsh: Float64Array;
   readonly #middle: number;
 
@@ -106,22 +125,8 @@ export class RelabelledPairs {
     this.#y = new Float64Array(n + 1);
     this.#flips = new Uint8Array(n);
     const ranked = rows.some((row) => row.row === 'signed-rank');
-    const ties = decimalTies(this.#d);
-    const used = ties.filter((value) => value !== 0);
-    this.#signRanks = null;
-    this.#signSigns = ties;
-    this.#signZ = null;
     this.#walsh = new Float64Array(ranked && n <= FEW ? (n * (n + 1)) / 2 : 0);
-    if (ranked && used.length > 0) {
-      const own = ranks(used.map(Math.abs)).ranks;
-      const all = new Float64Array(n);
-      let at = 0;
-      ties.forEach((value, i) => {
-        if (value !== 0) all[i] = own[at++] as number;
-      });
-      this.#signRanks = all;
-      this.#signZ = signedRankZ(own);
-    }
+    this.#signs = ranked ? signedRanksOf(this.#d) : null;
   }
 
   /** @param labels 0 = a is the first score, anything else b, one a unit */
@@ -252,13 +257,14 @@ export class RelabelledPairs {
 
   #signedRankRow(estimates: Float64Array, z: Float64Array, at: number): void {
     estimates[at] = this.#middleWalsh();
-    if (this.#signZ === null || this.#signRanks === null || this.#units.length < LEAST) return;
+    if (this.#signs === null || this.#units.length < LEAST) return;
+    const { ranks: own, signs, z: zOf } = this.#signs;
     let positive = 0;
-    for (let i = 0; i < this.#signRanks.length; i++) {
-      const sign = this.#signSigns[i] as number;
-      if (sign !== 0 && sign > 0 === (this.#flips[i] === 0)) positive += this.#signRanks[i] as number;
+    for (let i = 0; i < own.length; i++) {
+      const sign = signs[i] as number;
+      if (sign !== 0 && sign > 0 === (this.#flips[i] === 0)) positive += own[i] as number;
     }
-    z[at] = this.#signZ(positive);
+    z[at] = zOf(positive);
   }
 
   #middleWalsh(): number {
