@@ -79,7 +79,7 @@ async function computeLevels(
 
 function specOf(settings: ComparisonSettings, scores: Scores, seed: number): ComparisonSpec {
   const { effect: _, ...own } = settings;
-  const base = { ...own, trim: numberOf(settings.trim) ?? 0, seed };
+  const base = { ...own, trim: trimOf(numberOf(settings.trim) ?? 0), seed };
   const asked = askedOf(settings, numberOf);
   if (asked === undefined) return base;
   const factor = asked.type === 'contrast' || asked.type === 'levels' ? asked.factor : '';
@@ -98,4 +98,10 @@ function refuseEmpty(samples: Samples): void {
   throw new Refusal(
     `Nobody is left with a score under ${condition}, so there is nothing to compare. Look at the rules above, or at the missing combinations.`,
   );
+}
+
+/** @throws Refusal where nothing, or less than nothing, would be left to average (R3) */
+function trimOf(trim: number): number {
+  if (Number.isInteger(trim) && trim >= 0 && trim < 50) return trim;
+  throw new Refusal(`A trim of ${trim} % at each end cannot be computed. Give a whole number from 0 to 25.`);
 }

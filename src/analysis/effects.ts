@@ -2,6 +2,7 @@
 import { winsorizedNormalSd } from '../numerics/effect-size/akp-robust-d.ts';
 import { hedgesG, smallSampleFactor } from '../numerics/effect-size/hedges-g.ts';
 import { pairedD } from '../numerics/effect-size/paired-d.ts';
+import { noSpread } from '../numerics/inference.ts';
 import { sorted } from '../numerics/order.ts';
 import { resample } from '../numerics/resample.ts';
 import { trimCount } from '../numerics/scores.ts';
@@ -159,22 +160,28 @@ function averageD(x: Float64Array, y: Float64Array, counts: Int32Array): number 
 
 function robustOne(s: Float64Array, g: number, constant: number): number | null {
   const sd = Math.sqrt(winsorizedSquares(s, g) / (s.length - 1));
-  return sd > 0 ? (constant * trimmedMeanSorted(s, g)) / sd : null;
+  return noSpread(sd, sizeOf(s)) ? null : (constant * trimmedMeanSorted(s, g)) / sd;
 }
 
 function robustTwo(a: Float64Array, b: Float64Array, trim: number, constant: number): number | null {
   const [ga, gb] = [trimCount(a.length, trim), trimCount(b.length, trim)];
   const squares = winsorizedSquares(a, ga) + winsorizedSquares(b, gb);
   const sd = Math.sqrt(squares / (a.length + b.length - 2));
-  return sd > 0 ? (constant * (trimmedMeanSorted(a, ga) - trimmedMeanSorted(b, gb))) / sd : null;
+  const size = Math.max(sizeOf(a), sizeOf(b));
+  return noSpread(sd, size) ? null : (constant * (trimmedMeanSorted(a, ga) - trimmedMeanSorted(b, gb))) / sd;
 }
 
 function averageG(a: Float64Array, b: Float64Array): number | null {
   if (a.length < 2 || b.length < 2) return null;
   const variance = (winsorizedSquares(a, 0) / (a.length - 1) + winsorizedSquares(b, 0) / (b.length - 1)) / 2;
-  if (!(variance > 0)) return null;
+  if (noSpread(Math.sqrt(variance), Math.max(sizeOf(a), sizeOf(b)))) return null;
   const factor = smallSampleFactor(a.length + b.length - 2);
   return (factor * (trimmedMeanSorted(a, 0) - trimmedMeanSorted(b, 0))) / Math.sqrt(variance);
+}
+
+/** Largest size of ascending scores: a spread that is nothing but their rounding is none. */
+function sizeOf(s: Float64Array): number {
+  return Math.max(Math.abs(s[0] as number), Math.abs(s[s.length - 1] as number));
 }
 
 /** Sum of squared distances of the winsorized scores from their mean; s ascending. */

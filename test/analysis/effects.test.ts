@@ -51,6 +51,12 @@ describe('effect sizes of rows', () => {
     expect(turned).toBeCloseTo(-(robustPairedEffect(differences(x, y), 20, context).value as number), 12);
   });
 
+  it('degenerate: resamples of equal scores with rounding in them make no huge interval', () => {
+    const tied = Float64Array.of(0.1 + 0.2, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3, 0.3, 0.5, 0.9);
+    const limits = robustPairedEffect(tied, 20, context).interval;
+    if (limits !== null) expect(Math.max(...limits.map((each) => Math.abs(each as number)))).toBeLessThan(1e6);
+  });
+
   it('degenerate: no spread gives no value, with a reason', () => {
     const flat = Float64Array.of(2, 2, 2, 2);
     expect(robustPairedEffect(flat, 20, context)).toMatchObject({
