@@ -33,7 +33,7 @@ describe('files that cannot be read', () => {
     expect(await decidedOf(page)).toEqual(before);
     expect(Object.values(await statusesOf(page)).every((status) => status === 'fresh')).toBe(true);
     await page.getByRole('button', { name: 'close' }).click();
-    expect(await page.locator('[data-part="banner"]').count()).toBe(0);
+    await page.locator('[data-part="banner"]').waitFor({ state: 'detached' });
   });
 
   test('refuses worksheet files that are none, cut off, polluted, or nested without end', async () => {
